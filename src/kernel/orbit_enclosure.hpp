@@ -22,6 +22,8 @@ class OrbitEnclosure {
   std::uint64_t index() const { return index_; }
   /// Encloses z_n(c) for every c of the region and every start.
   DiscEnclosure range() const;
+  /// Encloses z_n at the region's centre, for every start: the same as range() for a point, without a copy.
+  const DiscEnclosure& at_centre() const { return z_; }
 
  private:
   void advance_remainder();

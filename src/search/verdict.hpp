@@ -1,0 +1,38 @@
+#pragma once
+#include <cstdint>
+#include <variant>
+
+#include "kernel/claim.hpp"
+
+namespace merestone {
+
+/// How far the search for a proof may go.
+struct SearchLimits {
+  std::uint64_t iterations = 10'000'000;  // steps of an orbit
+  std::uint32_t bits = 16'384;            // working precision
+  double seconds = 60;                    // for one parameter
+};
+
+struct DecideOptions {
+  Dyadic bailout = Dyadic(2.0);
+  SearchLimits limits;
+};
+
+/// A proved statement about the parameter, with the rule and hints that prove it.
+struct Proof {
+  Statement statement;
+  Rule by;
+};
+
+enum class Limit { iterations, precision, time };
+
+/// Nothing was proved; which limit ended the attempt, and where it stood.
+struct Undecided {
+  Limit limit = Limit::iterations;
+  std::uint64_t iterations = 0;  // steps made at the last precision
+  std::uint32_t bits = 53;       // the last precision
+};
+
+using Verdict = std::variant<Proof, Undecided>;
+
+}  // namespace merestone

@@ -3,17 +3,13 @@
 #include <cmath>
 #include <limits>
 
+#include "kernel/overloaded.hpp"
 #include "kernel/rules/rules.hpp"
 #include "kernel/typed_number.hpp"
 
 namespace merestone {
 
 namespace {
-
-template <class... Fs>
-struct Overloaded : Fs... {
-  using Fs::operator()...;
-};
 
 struct Cost {
   std::uint64_t steps;

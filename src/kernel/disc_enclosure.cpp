@@ -36,6 +36,15 @@ int proved_below(const DiscEnclosure& z, const Dyadic& bound) {
   return order < 0 ? 1 : order == 0 ? 0 : -1;
 }
 
+Bounds bounds_about(const Arf& middle, const Mag& radius) {
+  const slong bits = arf_bits(middle) + 64;
+  Arf width, lower, upper;
+  arf_set_mag(width, radius);
+  arf_sub(lower, middle, width, bits, ARF_RND_FLOOR);
+  arf_add(upper, middle, width, bits, ARF_RND_CEIL);
+  return {Dyadic(lower.raw()), Dyadic(upper.raw())};
+}
+
 // Adds to z.radius the rounding of the two midpoint parts: at most one unit in the last place of each that is inexact.
 void add_rounding(DiscEnclosure& z, bool re_inexact, bool im_inexact, slong bits) {
   if (re_inexact) arf_mag_add_ulp(z.radius, z.radius, z.re, bits);
@@ -44,16 +53,22 @@ void add_rounding(DiscEnclosure& z, bool re_inexact, bool im_inexact, slong bits
 
 }  // namespace
 
-DiscEnclosure DiscEnclosure::of(const ComplexRational& z, slong bits) {
+Acb ball_around(const ComplexRational& z, slong bits) {
   Acb ball;
   arb_set_fmpq(acb_realref(ball.raw()), z.re.raw(), bits);
   arb_set_fmpq(acb_imagref(ball.raw()), z.im.raw(), bits);
+  return ball;
+}
+
+DiscEnclosure DiscEnclosure::of(const Acb& ball) {
   DiscEnclosure disc;
   arf_set(disc.re, arb_midref(acb_realref(ball.raw())));
   arf_set(disc.im, arb_midref(acb_imagref(ball.raw())));
   mag_hypot(disc.radius, arb_radref(acb_realref(ball.raw())), arb_radref(acb_imagref(ball.raw())));
   return disc;
 }
+
+DiscEnclosure DiscEnclosure::of(const ComplexRational& z, slong bits) { return of(ball_around(z, bits)); }
 
 DiscEnclosure DiscEnclosure::of(const Disc& disc, slong bits) {
   DiscEnclosure out;
@@ -134,6 +149,10 @@ bool certainly_beyond(const DiscEnclosure& z, const Dyadic& bound) {
 bool certainly_within(const DiscEnclosure& z, const Dyadic& bound) { return proved_below(z, bound) >= 0; }
 
 bool certainly_inside(const DiscEnclosure& z, const Dyadic& bound) { return proved_below(z, bound) > 0; }
+
+Bounds re_bounds(const DiscEnclosure& z) { return bounds_about(z.re, z.radius); }
+
+Bounds im_bounds(const DiscEnclosure& z) { return bounds_about(z.im, z.radius); }
 
 Dyadic modulus_lower_bound(const DiscEnclosure& z) {
   Arf modulus, radius;

@@ -11,11 +11,16 @@ struct DiscEnclosure {
 
   /// Encloses z, with a midpoint of `bits` bits. Radius 0 where that is exact.
   static DiscEnclosure of(const ComplexRational& z, slong bits);
+  /// Encloses the rectangular ball.
+  static DiscEnclosure of(const Acb& ball);
   /// Encloses the closed disc.
   static DiscEnclosure of(const Disc& disc, slong bits);
 
   bool is_exact() const { return mag_is_zero(radius) != 0; }
 };
+
+/// A rectangular ball that encloses z, for what discs have no arithmetic for.
+Acb ball_around(const ComplexRational& z, slong bits);
 
 /// |midpoint|, rounded up.
 void midpoint_modulus_upper(Mag& out, const DiscEnclosure& z);
@@ -42,6 +47,15 @@ bool certainly_beyond(const DiscEnclosure& z, const Dyadic& bound);
 bool certainly_within(const DiscEnclosure& z, const Dyadic& bound);
 /// |z| < bound for every z of the disc.
 bool certainly_inside(const DiscEnclosure& z, const Dyadic& bound);
+
+/// A real interval with exact ends.
+struct Bounds {
+  Dyadic lower, upper;
+};
+
+/// The real and the imaginary part over the disc, rounded outward far below the last place of the midpoint.
+Bounds re_bounds(const DiscEnclosure& z);
+Bounds im_bounds(const DiscEnclosure& z);
 
 /// Lower and upper bounds of |z| over the disc, rounded outward to 64 bits.
 Dyadic modulus_lower_bound(const DiscEnclosure& z);

@@ -1,0 +1,116 @@
+#include "cli/answer.hpp"
+
+#include <fmt/format.h>
+
+#include "cli/enclosure_text.hpp"
+#include "format/spelling.hpp"
+#include "kernel/cycle.hpp"
+#include "kernel/overloaded.hpp"
+
+namespace merestone {
+
+namespace {
+
+constexpr std::size_t kMostCyclePointsInText = 6;
+
+std::string statement_word(const Statement& statement) {
+  return std::visit(Overloaded{[](const Outside&) { return "outside"; }, [](const Count&) { return "outside"; },
+                               [](const Inside&) { return "inside"; }, [](const Member&) { return "member"; }},
+                    statement);
+}
+
+std::string proof_in_words(const Rule& rule) {
+  return std::visit(
+      Overloaded{[](const Escape& by) { return fmt::format("escape over disc enclosures of {} bits (E1, E2)", by.bits); },
+                 [](const AttractingDisc& by) {
+                   return fmt::format("attracting disc in enclosures of {} bits (I1)", by.bits);
+                 },
+                 [](const ClosedForm&) { return std::string("polynomial inequality, exact (I3)"); },
+                 [](const RealSegment&) { return std::string("M meets the real axis in [-2, 1/4] (I4)"); },
+                 [](const Preperiodic&) { return std::string("exact arithmetic (P1)"); }},
+      rule);
+}
+
+std::string closed_form_reason(const Proof& proof, const ClosedForm& by) {
+  if (std::holds_alternative<Inside>(proof.statement)) return fmt::format("attracting cycle of period {}", by.period);
+  return by.period == 1 ? "on the boundary of the main cardioid" : "on the boundary of the disc of period 2";
+}
+
+std::string cycle_paragraph(const Answer& answer, const Proof& proof) {
+  const auto cycle = enclose_cycle(answer.c, proof.by);
+  if (!cycle) return {};
+  std::string text = fmt::format("  multiplier  {}\n", complex_literal(cycle->multiplier));
+  const std::size_t shown = std::min(cycle->points.size(), kMostCyclePointsInText);
+  for (std::size_t k = 0; k < shown; ++k)
+    text += fmt::format("  {}  {}\n", k == 0 ? "cycle     " : "          ", complex_literal(cycle->points[k]));
+  if (shown < cycle->points.size())
+    text += fmt::format("              … {} more points; --json lists all\n", cycle->points.size() - shown);
+  return text;
+}
+
+}  // namespace
+
+const Proof* Answer::proof() const {
+  const Verdict* verdict = std::get_if<Verdict>(&said);
+  return verdict != nullptr ? std::get_if<Proof>(verdict) : nullptr;
+}
+
+const Undecided* Answer::undecided() const {
+  const Verdict* verdict = std::get_if<Verdict>(&said);
+  return verdict != nullptr ? std::get_if<Undecided>(verdict) : nullptr;
+}
+
+std::string verdict_word(const Answer& answer) {
+  if (const Proof* proof = answer.proof()) return statement_word(proof->statement);
+  return answer.undecided() != nullptr ? "undecided" : "error";
+}
+
+std::string reason_in_words(const Proof& proof) {
+  if (const auto* count = std::get_if<Count>(&proof.statement))
+    return fmt::format("escape index {} for radius {}", count->index, spell(count->bailout.to_rational()));
+  return std::visit(
+      Overloaded{[](const Escape& by) { return fmt::format("|z_{}| > 2; the escape index is not settled", by.index); },
+                 [](const AttractingDisc& by) { return fmt::format("attracting cycle of period {}", by.period); },
+                 [&](const ClosedForm& by) { return closed_form_reason(proof, by); },
+                 [&](const RealSegment&) {
+                   return std::string(std::holds_alternative<Member>(proof.statement) ? "real and in [-2, 1/4]"
+                                                                                      : "real and beyond [-2, 1/4]");
+                 },
+                 [](const Preperiodic& by) {
+                   return fmt::format("a boundary point: z_{} = z_{} and 0 is not in the cycle",
+                                      by.preperiod + by.period, by.preperiod);
+                 }},
+      proof.by);
+}
+
+std::string limit_in_words(const Undecided& undecided) {
+  switch (undecided.limit) {
+    case Limit::iterations:
+      return fmt::format("the orbit stays within the bailout for {} iterations; raise --iterations",
+                         undecided.iterations);
+    case Limit::precision:
+      return fmt::format("{} bits do not suffice after {} iterations; raise --bits", undecided.bits,
+                         undecided.iterations);
+    case Limit::time:
+      break;
+  }
+  return fmt::format("the time is up at {} bits after {} iterations; raise --time-limit", undecided.bits,
+                     undecided.iterations);
+}
+
+std::string answer_line(const Answer& answer) {
+  const std::string reason = answer.failure() != nullptr     ? answer.failure()->message
+                             : answer.undecided() != nullptr ? limit_in_words(*answer.undecided())
+                                                             : reason_in_words(*answer.proof());
+  return fmt::format("{}  {}: {}", answer.asked.text, verdict_word(answer), reason);
+}
+
+std::string answer_paragraph(const Answer& answer) {
+  std::string text = answer_line(answer) + "\n";
+  const Proof* proof = answer.proof();
+  if (proof == nullptr) return text;
+  if (std::holds_alternative<Inside>(proof->statement)) text += cycle_paragraph(answer, *proof);
+  return text + fmt::format("  proved by   {}\n", proof_in_words(proof->by));
+}
+
+}  // namespace merestone

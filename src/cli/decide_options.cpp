@@ -1,0 +1,111 @@
+#include "cli/decide_options.hpp"
+
+#include "kernel/typed_number.hpp"
+
+namespace merestone {
+
+namespace {
+
+constexpr const char* kFooter = R"(Examples:
+  merestone decide -0.75+0.1i
+      one parameter; also 1/4, -17/20+1/5i, 0x3p-2 or -0.75,0.1
+  merestone decide --points list.txt --out list.mere.json
+      a parameter a line, '#' begins a comment; writes a certificate for a colleague
+  merestone-check list.mere.json
+      what the colleague runs: it establishes every claim anew
+  merestone decide --expect outside 0.2501 && echo "it is outside"
+      for scripts: the exit code is the answer
+  some-program | merestone decide --points - --json
+      a JSON object a line, as soon as a point is decided
+
+Verdicts:
+  outside     not in M; with the proved escape index
+  inside      in the interior of M; with the period of the attracting cycle
+  member      in M; why, and whether it is known to lie on the boundary
+  undecided   nothing was proved; which limit ended the attempt
+
+Exit codes:
+  0  everything asked was proved, and is as expected
+  1  something is proved to be other than expected
+  2  usage, or a malformed parameter
+  3  something is undecided within the limits
+  4  a file could not be read or written
+)";
+
+void add_input(CLI::App& command, DecideWords& words) {
+  command.add_option("point", words.points, "Parameters: decimals, fractions or dyadics of any length, as a+bi or a,b")
+      ->type_name("POINT");
+  command.add_option("--points", words.list, "File with one parameter a line, or - for standard input")
+      ->type_name("FILE");
+}
+
+void add_limits(CLI::App& command, DecideWords& words) {
+  command.add_option("--bailout", words.bailout, "Radius for which the escape index is proved, from 2 to 2^60")
+      ->type_name("RADIUS")
+      ->capture_default_str();
+  command.add_option("--iterations", words.limits.iterations, "Most steps of an orbit")
+      ->type_name("N")
+      ->check(CLI::Range(std::uint64_t{1}, std::uint64_t{1'000'000'000'000}))
+      ->capture_default_str();
+  command.add_option("--bits", words.limits.bits, "Most bits of working precision")
+      ->type_name("N")
+      ->check(CLI::Range(53, 1'048'576))
+      ->capture_default_str();
+  command.add_option("--time-limit", words.limits.seconds, "Most seconds for one parameter")
+      ->type_name("SECONDS")
+      ->check(CLI::Range(1e-3, 1e7))
+      ->capture_default_str();
+}
+
+void add_output(CLI::App& command, DecideWords& words) {
+  command.add_option("--expect", words.expect, "Exit with 1 where a point is proved to be other than this")
+      ->check(CLI::IsMember({"outside", "inside", "member"}));
+  command.add_option("--out", words.out,
+                     "Write a certificate: NAME.mere.json (up to 10,000 claims) or NAME.mere (any number)")
+      ->type_name("FILE");
+  command.add_flag("--json", words.json, "Answer with a JSON object a line");
+  command.add_flag("--quiet", words.quiet, "Print errors only; the exit code is the answer");
+  command.add_option("--threads", words.threads, "Threads for many points; all that the process may use by default")
+      ->type_name("N")
+      ->check(CLI::Range(1U, 4096U));
+}
+
+Result<Dyadic> read_bailout(const std::string& text) {
+  const Result<Rational> typed = parse_real(text);
+  if (!typed) return typed.failure();
+  constexpr slong kBits = 4096;
+  Arf radius;
+  const bool inexact = arf_fmpz_div(radius, typed->numerator(), typed->denominator(), kBits, ARF_RND_DOWN) != 0;
+  const Dyadic bailout{radius.raw()};
+  if (inexact) return Failure{"--bailout " + text + ": is not a dyadic number; take one such as 2, 2.5 or 1024"};
+  if (bailout < Dyadic(2.0) || bailout > Dyadic(0x1p60))
+    return Failure{"--bailout " + text + ": must lie between 2 and 2^60"};
+  return bailout;
+}
+
+}  // namespace
+
+CLI::App* add_decide_command(CLI::App& program, DecideWords& words) {
+  CLI::App* command = program.add_subcommand(
+      "decide", "Prove for each parameter c that it lies outside the Mandelbrot set M, inside, or is a member");
+  add_input(*command, words);
+  add_limits(*command, words);
+  add_output(*command, words);
+  command->footer(kFooter);
+  return command;
+}
+
+Result<DecideRequest> read_decide_words(const DecideWords& words) {
+  if (words.points.empty() == words.list.empty())
+    return Failure{words.list.empty() ? "decide: no parameter was given; write one, such as -0.75+0.1i, or --points FILE"
+                                      : "decide: give parameters or --points, not both"};
+  const Result<Dyadic> bailout = read_bailout(words.bailout);
+  if (!bailout) return bailout.failure();
+  DecideRequest request{{*bailout, words.limits}, std::nullopt};
+  if (words.expect == "outside") request.expect = Expectation::outside;
+  if (words.expect == "inside") request.expect = Expectation::inside;
+  if (words.expect == "member") request.expect = Expectation::member;
+  return request;
+}
+
+}  // namespace merestone

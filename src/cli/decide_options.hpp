@@ -1,0 +1,38 @@
+#pragma once
+#include <CLI/CLI.hpp>
+#include <cstdint>
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "kernel/result.hpp"
+#include "search/verdict.hpp"
+
+namespace merestone {
+
+/// What --expect asks of every point.
+enum class Expectation { outside, inside, member };
+
+/// The words of `merestone decide`, as typed.
+struct DecideWords {
+  std::vector<std::string> points;
+  std::string list;
+  std::string bailout = "2";
+  SearchLimits limits;
+  std::string expect;
+  std::string out;
+  bool json = false, quiet = false;
+  unsigned threads = 0;
+};
+
+/// Adds the command to the program; `words` must outlive the parsing.
+CLI::App* add_decide_command(CLI::App& program, DecideWords& words);
+
+/// The words, read and checked.
+struct DecideRequest {
+  DecideOptions options;
+  std::optional<Expectation> expect;
+};
+Result<DecideRequest> read_decide_words(const DecideWords& words);
+
+}  // namespace merestone

@@ -1,0 +1,20 @@
+#include "format/shown.hpp"
+
+namespace merestone {
+
+std::string printable(std::string_view text, std::size_t most) {
+  std::string out(text.substr(0, most));
+  for (char& c : out)
+    if (c < ' ' || c > '~') c = '?';
+  return text.size() > most ? out + "..." : out;
+}
+
+std::string shown(std::string_view text, std::size_t most) { return "'" + printable(text, most) + "'"; }
+
+std::string grouped(unsigned long long n) {
+  std::string digits = std::to_string(n);
+  for (std::size_t end = digits.size(); end > 3; end -= 3) digits.insert(end - 3, ",");
+  return digits;
+}
+
+}  // namespace merestone

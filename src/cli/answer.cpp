@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include "cli/enclosure_text.hpp"
+#include "format/shown.hpp"
 #include "format/spelling.hpp"
 #include "kernel/cycle.hpp"
 #include "kernel/overloaded.hpp"
@@ -12,6 +13,7 @@ namespace merestone {
 namespace {
 
 constexpr std::size_t kMostCyclePointsInText = 6;
+constexpr std::size_t kLongestShownPoint = 120;
 
 std::string statement_word(const Statement& statement) {
   return std::visit(Overloaded{[](const Outside&) { return "outside"; }, [](const Count&) { return "outside"; },
@@ -19,12 +21,15 @@ std::string statement_word(const Statement& statement) {
                     statement);
 }
 
+std::string arithmetic_in_words(std::uint32_t bits, const char* lemma) {
+  if (bits == kDoubleBits) return fmt::format("in tracked double precision ({}, E4)", lemma);
+  return fmt::format("over disc enclosures of {} bits ({}, E2)", bits, lemma);
+}
+
 std::string proof_in_words(const Rule& rule) {
   return std::visit(
-      Overloaded{[](const Escape& by) { return fmt::format("escape over disc enclosures of {} bits (E1, E2)", by.bits); },
-                 [](const AttractingDisc& by) {
-                   return fmt::format("attracting disc in enclosures of {} bits (I1)", by.bits);
-                 },
+      Overloaded{[](const Escape& by) { return "escape " + arithmetic_in_words(by.bits, "E1"); },
+                 [](const AttractingDisc& by) { return "attracting disc " + arithmetic_in_words(by.bits, "I1"); },
                  [](const ClosedForm&) { return std::string("polynomial inequality, exact (I3)"); },
                  [](const RealSegment&) { return std::string("M meets the real axis in [-2, 1/4] (I4)"); },
                  [](const Preperiodic&) { return std::string("exact arithmetic (P1)"); }},
@@ -102,7 +107,7 @@ std::string answer_line(const Answer& answer) {
   const std::string reason = answer.failure() != nullptr     ? answer.failure()->message
                              : answer.undecided() != nullptr ? limit_in_words(*answer.undecided())
                                                              : reason_in_words(*answer.proof());
-  return fmt::format("{}  {}: {}", answer.asked.text, verdict_word(answer), reason);
+  return fmt::format("{}  {}: {}", shortened(answer.asked.text, kLongestShownPoint), verdict_word(answer), reason);
 }
 
 std::string answer_paragraph(const Answer& answer) {
@@ -110,7 +115,7 @@ std::string answer_paragraph(const Answer& answer) {
   const Proof* proof = answer.proof();
   if (proof == nullptr) return text;
   if (std::holds_alternative<Inside>(proof->statement)) text += cycle_paragraph(answer, *proof);
-  return text + fmt::format("  proved by   {}\n", proof_in_words(proof->by));
+  return text + fmt::format("  proved by   {}\n", proof_in_words(answer.claim ? answer.claim->by : proof->by));
 }
 
 }  // namespace merestone

@@ -13,7 +13,7 @@ struct Answer {
   PointLine asked;
   ComplexRational c;                          // what was read; zero when the text is malformed
   std::variant<Failure, Verdict> said;
-  std::optional<Claim> claim;                 // when a certificate was asked for and there is a proof
+  std::optional<Claim> claim;                 // what the kernel established anew, where it was asked to
 
   const Failure* failure() const { return std::get_if<Failure>(&said); }
   const Proof* proof() const;

@@ -1,5 +1,6 @@
 #include "cli/decide_options.hpp"
 
+#include "cli/decide_certificate.hpp"
 #include "kernel/typed_number.hpp"
 
 namespace merestone {
@@ -75,7 +76,7 @@ Result<Dyadic> read_bailout(const std::string& text) {
   if (!typed) return typed.failure();
   constexpr slong kBits = 4096;
   Arf radius;
-  const bool inexact = arf_fmpz_div(radius, typed->numerator(), typed->denominator(), kBits, ARF_RND_DOWN) != 0;
+  const bool inexact = arf_fmpz_div_fmpz(radius, typed->numerator(), typed->denominator(), kBits, ARF_RND_DOWN) != 0;
   const Dyadic bailout{radius.raw()};
   if (inexact) return Failure{"--bailout " + text + ": is not a dyadic number; take one such as 2, 2.5 or 1024"};
   if (bailout < Dyadic(2.0) || bailout > Dyadic(0x1p60))
@@ -99,6 +100,8 @@ Result<DecideRequest> read_decide_words(const DecideWords& words) {
   if (words.points.empty() == words.list.empty())
     return Failure{words.list.empty() ? "decide: no parameter was given; write one, such as -0.75+0.1i, or --points FILE"
                                       : "decide: give parameters or --points, not both"};
+  if (!words.out.empty())
+    if (auto problem = check_certificate_name(words.out)) return *problem;
   const Result<Dyadic> bailout = read_bailout(words.bailout);
   if (!bailout) return bailout.failure();
   DecideRequest request{{*bailout, words.limits}, std::nullopt};

@@ -4,10 +4,12 @@
 #include <sys/stat.h>
 #include <unistd.h>
 
+#include <algorithm>
 #include <cerrno>
 #include <cstring>
 #include <string_view>
 
+#include "cli/shared_arguments.hpp"
 #include "kernel/typed_number.hpp"
 
 namespace merestone {
@@ -16,14 +18,6 @@ namespace {
 
 constexpr std::size_t kReadAtOnce = 1 << 16;
 constexpr std::size_t kLongestLine = 2 * kLongestTypedNumber + 1024;
-
-std::string_view without_comment_and_blanks(std::string_view line) {
-  line = line.substr(0, line.find('#'));
-  constexpr std::string_view kBlanks = " \t\r\v\f";
-  const std::size_t first = line.find_first_not_of(kBlanks);
-  if (first == std::string_view::npos) return {};
-  return line.substr(first, line.find_last_not_of(kBlanks) - first + 1);
-}
 
 Failure system_failure(const std::string& name) { return {name + ": " + std::strerror(errno)}; }
 
@@ -54,8 +48,8 @@ PointsInput::~PointsInput() {
 
 void PointsInput::take_line(std::string_view text, std::vector<PointLine>& lines) {
   ++line_;
-  const std::string_view content = without_comment_and_blanks(text);
-  if (!content.empty()) lines.push_back({line_, std::string(content)});
+  std::string content = plain_text(text.substr(0, text.find('#')));
+  if (!content.empty()) lines.push_back({line_, std::move(content)});
 }
 
 void PointsInput::take_lines(std::vector<PointLine>& lines, std::size_t most) {
@@ -72,13 +66,16 @@ void PointsInput::take_lines(std::vector<PointLine>& lines, std::size_t most) {
   }
 }
 
+// Of a line that is longer than any number only the beginning is kept, marked so that it is refused.
+void PointsInput::cut_long_line() {
+  const std::size_t end = std::min(buffer_.find('\n'), buffer_.size());
+  if (end > kLongestLine) buffer_.replace(kLongestLine, end - kLongestLine, "?");
+}
+
 // Reads what there is; false at the end of the input.
 Result<bool> PointsInput::fill() {
   buffer_.erase(0, consumed_);
   consumed_ = 0;
-  if (buffer_.size() > kLongestLine)
-    return Failure{name_ + ": line " + std::to_string(line_ + 1) + " is longer than " + std::to_string(kLongestLine) +
-                   " characters; write one parameter a line"};
   const std::size_t before = buffer_.size();
   buffer_.resize(before + kReadAtOnce);
   ssize_t got = 0;
@@ -87,6 +84,7 @@ Result<bool> PointsInput::fill() {
   } while (got < 0 && errno == EINTR);
   buffer_.resize(before + static_cast<std::size_t>(got > 0 ? got : 0));
   if (got < 0) return system_failure(name_);
+  cut_long_line();
   return got > 0;
 }
 

@@ -25,7 +25,8 @@ class PointsInput {
   ~PointsInput();
 
   /// Up to `most` of the lines that are there, at least one unless the list has ended.
-  /// On failure: the input cannot be read, or a line is longer than any number that is read.
+  /// A line that is longer than any number comes as its beginning, which no reader of numbers takes.
+  /// On failure: the input cannot be read.
   Result<std::vector<PointLine>> next(std::size_t most);
 
  private:
@@ -33,6 +34,7 @@ class PointsInput {
 
   void take_lines(std::vector<PointLine>& lines, std::size_t most);
   void take_line(std::string_view text, std::vector<PointLine>& lines);
+  void cut_long_line();
   Result<bool> fill();
 
   int descriptor_;

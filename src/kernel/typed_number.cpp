@@ -72,8 +72,10 @@ class Reader {
   }
 
   Failure fail(const std::string& what) const {
-    const std::string shown(text_.substr(0, 60));
-    return {"'" + shown + (text_.size() > 60 ? "…" : "") + "': " + what +
+    std::string shown(text_.substr(0, 60));
+    for (char& c : shown)
+      if (c < ' ' || c > '~') c = '?';  // the text is not trusted with the terminal
+    return {"'" + shown + (text_.size() > 60 ? "..." : "") + "': " + what +
             "; write a parameter as -0.75+0.1i, -3/4+1/10i, 0x3p-2 or -0.75,0.1"};
   }
 

@@ -52,17 +52,14 @@ SearchLimits limits_for(const DecideOptions& options, const std::optional<Proof>
   return limits;
 }
 
-// A claim's precision for a proof that double precision found: one limb, with 11 bits to spare.
-constexpr std::uint32_t kOneLimb = 64;
-
 Proof escape_proof(const Dyadic& bailout, std::uint64_t index) {
-  return {Count{bailout, index}, Escape{0, kOneLimb}};
+  return {Count{bailout, index}, Escape{0, kDoubleBits}};
 }
 
 Proof disc_proof(const DoubleDisc& disc) {
   return {Inside{}, AttractingDisc{disc.period,
                                    {{Dyadic(disc.x), Dyadic(disc.y)}, Dyadic(disc.radius)},
-                                   kOneLimb}};
+                                   kDoubleBits}};
 }
 
 // A bailout that double precision holds exactly.
@@ -74,13 +71,13 @@ std::optional<double> as_double(const Dyadic& bailout) {
 
 Verdict in_double(const DoubleParameter& lane, const Dyadic& bailout, const SearchLimits& limits, Deadline& deadline) {
   const std::optional<double> radius = as_double(bailout);
-  if (!radius) return Undecided{Limit::precision, 0, 53};
+  if (!radius) return Undecided{Limit::precision, 0, kDoubleBits};
   const DoubleResult result = decide_in_double(lane, *radius, limits.iterations, deadline);
   if (const auto* escape = std::get_if<DoubleEscape>(&result)) return escape_proof(bailout, escape->index);
   if (const auto* disc = std::get_if<DoubleDisc>(&result)) return disc_proof(*disc);
-  if (deadline.passed_now()) return Undecided{Limit::time, limits.iterations, 53};
-  if (const auto* lost = std::get_if<DoubleLost>(&result)) return Undecided{Limit::precision, lost->index, 53};
-  return Undecided{Limit::iterations, limits.iterations, 53};
+  if (deadline.passed_now()) return Undecided{Limit::time, limits.iterations, kDoubleBits};
+  if (const auto* lost = std::get_if<DoubleLost>(&result)) return Undecided{Limit::precision, lost->index, kDoubleBits};
+  return Undecided{Limit::iterations, limits.iterations, kDoubleBits};
 }
 
 bool wants_more_bits(const Verdict& verdict) {
@@ -91,7 +88,7 @@ bool wants_more_bits(const Verdict& verdict) {
 Verdict climb(const ComplexRational& c, const std::optional<DoubleParameter>& lane, const Dyadic& bailout,
               const SearchLimits& limits) {
   Deadline deadline(limits.seconds);
-  Verdict verdict = Undecided{Limit::precision, 0, 53};
+  Verdict verdict = Undecided{Limit::precision, 0, kDoubleBits};
   if (lane) verdict = in_double(*lane, bailout, limits, deadline);
   for (std::uint32_t bits = 128; wants_more_bits(verdict) && bits <= limits.bits; bits *= 2)
     verdict = decide_in_balls(c, bailout, limits.iterations, bits, deadline);

@@ -18,6 +18,9 @@ struct DecideOptions {
   SearchLimits limits;
 };
 
+/// The bits of a proof that was found in tracked double precision (Lemma E4); proofs over disc enclosures have more.
+inline constexpr std::uint32_t kDoubleBits = 53;
+
 /// A proved statement about the parameter, with the rule and hints that prove it.
 struct Proof {
   Statement statement;
@@ -30,7 +33,7 @@ enum class Limit { iterations, precision, time };
 struct Undecided {
   Limit limit = Limit::iterations;
   std::uint64_t iterations = 0;  // steps made at the last precision
-  std::uint32_t bits = 53;       // the last precision
+  std::uint32_t bits = kDoubleBits;       // the last precision
 };
 
 using Verdict = std::variant<Proof, Undecided>;

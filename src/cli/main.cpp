@@ -1,0 +1,66 @@
+#include <CLI/CLI.hpp>
+#include <cstdio>
+#include <new>
+
+#include "cli/decide_options.hpp"
+#include "cli/decide_run.hpp"
+#include "cli/shared_arguments.hpp"
+#include "cli/shared_manual.hpp"
+#include "cli/shared_output.hpp"
+#include "cli/shared_parse.hpp"
+#include "cli/shared_version.hpp"
+
+namespace {
+
+using namespace merestone;
+
+constexpr const char* kDescription =
+    "Proved statements about the Mandelbrot set M, the set of the parameters c for which z -> z^2 + c, started at 0, "
+    "stays bounded. What is printed as a verdict has been proved with enclosures; what is not proved is called "
+    "undecided";
+
+constexpr const char* kFooter = R"(Start with:
+  merestone decide -0.75+0.1i           a verdict, with its proof in a line
+  merestone decide --help               parameters, lists, limits, certificates
+  merestone-check FILE                  what a colleague runs on a certificate
+
+Files of this program: docs/proofs.md has the lemmas, docs/trust.md says what a verdict rests on.
+)";
+
+std::string joined(int count, char** words) {
+  std::string line;
+  for (int i = 0; i < count; ++i) line += (i > 0 ? " " : "") + std::string(words[i]);
+  return line;
+}
+
+int run(int count, char** words) {
+  CLI::App program(kDescription, "merestone");
+  program.set_version_flag("--version", std::string("merestone ") + kProgramVersion, "Print the version and exit");
+  program.set_help_flag("-h,--help", "Print this help and exit");
+  program.footer(kFooter);
+  program.require_subcommand(1);
+  DecideWords decide_words;
+  const CLI::App* decide = add_decide_command(program, decide_words);
+  ManualFormat format{};
+  CLI::App* manual_command =
+      program.add_subcommand("manual", "Print the manual page or the completion for a shell");
+  manual_command->add_option("--format", format, "man, or the shell: bash, zsh, fish")
+      ->transform(CLI::CheckedTransformer(manual_formats()))
+      ->type_name("{man,bash,zsh,fish}");
+  if (const auto code = parse_words(program, arguments(count, words))) return static_cast<int>(*code);
+  if (decide->parsed()) return static_cast<int>(run_decide(decide_words, joined(count, words)));
+  Output output;
+  output.write(manual(program, format));
+  return static_cast<int>(output.failed() ? ExitCode::io_failed : ExitCode::established);
+}
+
+}  // namespace
+
+int main(int count, char** words) {
+  try {
+    return run(count, words);
+  } catch (const std::bad_alloc&) {
+    std::fputs("merestone: out of memory; lower --bits or --threads\n", stderr);
+    return static_cast<int>(ExitCode::io_failed);
+  }
+}

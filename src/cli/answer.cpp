@@ -42,14 +42,13 @@ std::string closed_form_reason(const Proof& proof, const ClosedForm& by) {
 }
 
 std::string cycle_paragraph(const Answer& answer, const Proof& proof) {
-  const auto cycle = enclose_cycle(answer.c, proof.by);
+  const auto cycle = enclose_cycle(answer.c, proof.by, kMostCyclePointsInText);
   if (!cycle) return {};
   std::string text = fmt::format("  multiplier  {}\n", complex_literal(cycle->multiplier));
-  const std::size_t shown = std::min(cycle->points.size(), kMostCyclePointsInText);
-  for (std::size_t k = 0; k < shown; ++k)
+  for (std::size_t k = 0; k < cycle->points.size(); ++k)
     text += fmt::format("  {}  {}\n", k == 0 ? "cycle     " : "          ", complex_literal(cycle->points[k]));
-  if (shown < cycle->points.size())
-    text += fmt::format("              … {} more points; --json lists all\n", cycle->points.size() - shown);
+  if (cycle->points.size() < cycle->period)
+    text += fmt::format("              and {} more points\n", cycle->period - cycle->points.size());
   return text;
 }
 

@@ -13,6 +13,8 @@ namespace {
 
 using Json = nlohmann::ordered_json;
 
+constexpr std::size_t kMostCyclePoints = 4096;  // of longer cycles these are the first
+
 Json complex_json(const DiscEnclosure& z) {
   const PartLiterals parts = part_literals(z);
   return {{"re", parts.re}, {"im", parts.im}};
@@ -46,7 +48,7 @@ void add_proof(Json& json, const Answer& answer, const Proof& proof) {
   add_rule(json, proof.by);
   if (std::holds_alternative<Member>(proof.statement)) json["why"] = reason_in_words(proof);
   if (!std::holds_alternative<Inside>(proof.statement)) return;
-  const auto cycle = enclose_cycle(answer.c, proof.by);
+  const auto cycle = enclose_cycle(answer.c, proof.by, kMostCyclePoints);
   if (!cycle) return;
   json["multiplier"] = complex_json(cycle->multiplier);
   json["cycle"] = Json::array();

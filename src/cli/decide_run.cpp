@@ -48,6 +48,7 @@ class DecideRun {
   std::optional<std::vector<PointLine>> next_batch();
   Reply reply(const std::vector<PointLine>& batch);
   Answer answer(const PointLine& asked) const;
+  void certify_or_withdraw(Answer& answer, const Proof& proof) const;
   /// Is each verdict established anew by the kernel? For a certificate, and for few parameters; a long list would take
   /// several times as long.
   bool certifies() const { return file_ || !points_.is_list(); }
@@ -95,8 +96,18 @@ Answer DecideRun::answer(const PointLine& asked) const {
   if (!c) return {asked, {}, c.failure(), std::nullopt};
   Answer answer{asked, *c, decide_point(*c, request_.options), std::nullopt};
   if (const Proof* proof = certifies() ? answer.proof() : nullptr)
-    answer.claim = certify(answer.c, asked.text, *proof, limits_of_certificate(request_.options.limits));
+    certify_or_withdraw(answer, *proof);
   return answer;
+}
+
+// A verdict that the kernel does not establish anew is withdrawn.
+void DecideRun::certify_or_withdraw(Answer& answer, const Proof& proof) const {
+  const Limits limits = limits_of_certificate(request_.options.limits);
+  answer.claim = certify(answer.c, answer.asked.text, proof, limits);
+  if (answer.claim) return;
+  fmt::print(stderr, "merestone: {}: search and kernel disagree, which is a defect of the program; please report this parameter\n",
+             shown(answer.asked.text));
+  answer.said = Verdict(Undecided{Limit::precision, 0, limits.bits});
 }
 
 void DecideRun::render(const Answer& answer, Reply& reply) const {
@@ -108,10 +119,6 @@ void DecideRun::render(const Answer& answer, Reply& reply) const {
   else if (!words_.quiet)
     reply.out += points_.is_list() ? answer_line(answer) + "\n" : answer_paragraph(answer);
   if (file_ && answer.claim) reply.claims.push_back(to_json(*answer.claim));
-  if (!certifies() || answer.proof() == nullptr || answer.claim) return;
-  reply.err += fmt::format("merestone: {}: the kernel did not establish the verdict anew; do not rely on it, and report "
-                           "this parameter\n", shown(answer.asked.text));
-  reply.code = worse(reply.code, ExitCode::refuted);
 }
 
 Reply DecideRun::reply(const std::vector<PointLine>& batch) {
@@ -171,6 +178,8 @@ void DecideRun::finish_certificate() {
 
 void DecideRun::finish() {
   progress_.wipe();
+  if (tally_.all() == 0 && code_ == ExitCode::established)
+    return fail(ExitCode::malformed, words_.list + ": holds no parameter; write one a line, such as -0.75+0.1i");
   if (points_.is_list() && !words_.json && !words_.quiet) output_.write(tally_.in_words() + "\n");
   if (file_) finish_certificate();
   if (output_.failed()) fail(ExitCode::io_failed, "standard output cannot be written");

@@ -14,8 +14,7 @@ void DecideTally::take(const Answer& answer) {
 }
 
 std::string DecideTally::in_words() const {
-  const std::uint64_t all = outside_ + inside_ + member_ + undecided_ + errors_;
-  std::string text = grouped(all) + (all == 1 ? " parameter:" : " parameters:");
+  std::string text = grouped(all()) + (all() == 1 ? " parameter:" : " parameters:");
   const auto add = [&](std::uint64_t n, const char* word) {
     if (n > 0) text += (text.back() == ':' ? " " : ", ") + grouped(n) + " " + word;
   };

@@ -11,6 +11,7 @@ namespace merestone {
 class DecideTally {
  public:
   void take(const Answer& answer);
+  std::uint64_t all() const { return outside_ + inside_ + member_ + undecided_ + errors_; }
   std::uint64_t errors() const { return errors_; }
 
   /// "12 parameters: 7 outside, 4 inside, 1 undecided"

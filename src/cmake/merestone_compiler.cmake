@@ -16,8 +16,8 @@ set(MERESTONE_FLOATING_POINT_OPTIONS -ffp-contract=off)
 function(merestone_options target)
   target_compile_options(${target} PRIVATE -Wall -Wextra -Wconversion -Wshadow -Wnon-virtual-dtor
                                            $<$<BOOL:${MERESTONE_WERROR}>:-Werror>)
-  # GCC 12 warns wrongly about std::string's operator+ (GCC bug 105329).
-  target_compile_options(${target} PRIVATE $<$<CXX_COMPILER_ID:GNU>:-Wno-restrict>)
+  # GCC 12 warns wrongly about std::string's operator+ (GCC bug 105329) and about moved variants of vectors.
+  target_compile_options(${target} PRIVATE $<$<CXX_COMPILER_ID:GNU>:-Wno-restrict -Wno-maybe-uninitialized>)
   if(MERESTONE_SANITIZE)
     target_compile_options(${target} PRIVATE -fsanitize=${MERESTONE_SANITIZE} -fno-sanitize-recover=all
                                              -fno-omit-frame-pointer)

@@ -1,8 +1,5 @@
 #include "kernel/check.hpp"
 
-#include <cmath>
-#include <limits>
-
 #include "kernel/overloaded.hpp"
 #include "kernel/rules/rules.hpp"
 #include "kernel/typed_number.hpp"
@@ -10,23 +7,6 @@
 namespace merestone {
 
 namespace {
-
-struct Cost {
-  std::uint64_t steps;
-  std::uint32_t bits;
-};
-
-Cost cost_of(const Claim& claim) {
-  return std::visit(
-      Overloaded{[&](const Escape& by) {
-                   const Count* count = std::get_if<Count>(&claim.statement);
-                   return Cost{count != nullptr ? count->index : by.index, by.bits};
-                 },
-                 [](const AttractingDisc& by) { return Cost{by.period, by.bits}; },
-                 [](const ClosedForm&) { return Cost{1, 64}; }, [](const RealSegment&) { return Cost{1, 64}; },
-                 [](const Preperiodic& by) { return Cost{std::uint64_t{by.preperiod} + by.period, 64}; }},
-      claim.by);
-}
 
 std::optional<NotEstablished> request_outside_region(const Claim& claim) {
   if (!claim.request) return std::nullopt;
@@ -54,14 +34,31 @@ struct Dispatch {
   }
 };
 
-// Hints that no rule can use; the reader rejects them too, this is for claims that were built in memory.
+constexpr std::uint64_t kLargestPeriod = std::uint64_t{1} << 53;  // figures hold it exactly
+
+// The reader of certificates rejects these claims too; here it is for claims that were built in memory.
+
+bool is_proper(const Disc& disc) {
+  return disc.centre.re.is_moderate() && disc.centre.im.is_moderate() && disc.radius.is_moderate() &&
+         disc.radius.sign() > 0;
+}
+
+bool is_proper(const Region& region) {
+  return std::visit(Overloaded{[](const Point&) { return true; },
+                               [](const Segment& segment) {
+                                 return segment.lo.is_moderate() && segment.hi.is_moderate() && segment.lo < segment.hi;
+                               },
+                               [](const Disc& disc) { return is_proper(disc); }},
+                    region);
+}
+
 bool hints_are_sane(const Claim& claim) {
   const Count* count = std::get_if<Count>(&claim.statement);
-  if (count != nullptr && (count->index < 1 || count->bailout < Dyadic(2.0) || count->bailout > Dyadic(0x1p60)))
+  if (count != nullptr && (count->index < 1 || !count->bailout.is_moderate() || count->bailout < Dyadic(2.0) || count->bailout > Dyadic(0x1p60)))
     return false;
   return std::visit(
       Overloaded{[&](const Escape& by) { return by.bits >= 2 && (count != nullptr ? by.index == 0 : by.index >= 1); },
-                 [](const AttractingDisc& by) { return by.bits >= 2 && by.period >= 1 && by.disc.radius.sign() > 0; },
+                 [](const AttractingDisc& by) { return by.bits >= 2 && by.period >= 1 && by.period <= kLargestPeriod && is_proper(by.disc); },
                  [](const ClosedForm& by) { return by.period == 1 || by.period == 2; },
                  [](const RealSegment&) { return true; }, [](const Preperiodic& by) { return by.period >= 1; }},
       claim.by);
@@ -69,18 +66,11 @@ bool hints_are_sane(const Claim& claim) {
 
 }  // namespace
 
-std::uint64_t work_of(const Claim& claim) {
-  const Cost cost = cost_of(claim);
-  const double words = std::ceil(cost.bits / 64.0);
-  const double work = static_cast<double>(cost.steps) * std::ceil(std::pow(words, 1.6));
-  constexpr double kMost = 0x1p63;
-  return work < kMost ? static_cast<std::uint64_t>(work) : std::numeric_limits<std::uint64_t>::max();
-}
-
 Outcome establish(const Claim& claim, const Limits& limits) {
+  if (!is_proper(claim.region)) return NotEstablished{"the region is not proper: a disc has a radius above 0, a segment two ends in order"};
   if (!hints_are_sane(claim)) return NotEstablished{"a hint is out of the rule's range"};
-  if (const Cost cost = cost_of(claim); cost.bits > limits.bits)
-    return OverLimit{"it asks for " + std::to_string(cost.bits) + " bits; the limit is " + std::to_string(limits.bits)};
+  if (const std::uint32_t bits = bits_of(claim); bits > limits.bits)
+    return OverLimit{"it asks for " + std::to_string(bits) + " bits; the limit is " + std::to_string(limits.bits)};
   if (const std::uint64_t work = work_of(claim); work > limits.work)
     return OverLimit{"it implies " + std::to_string(work) + " units of work; the limit is " +
                      std::to_string(limits.work)};

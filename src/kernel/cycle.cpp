@@ -20,7 +20,7 @@ CycleEnclosure fixed_point(const ComplexRational& c) {
   acb_neg(multiplier, multiplier);
   Acb point = multiplier;
   acb_mul_2exp_si(point, point, -1);
-  return {{DiscEnclosure::of(point)}, DiscEnclosure::of(multiplier)};
+  return {{DiscEnclosure::of(point)}, 1, DiscEnclosure::of(multiplier)};
 }
 
 // Period 2: the points are (-1 ± sqrt(-3 - 4c)) / 2, the multiplier 4 (1 + c).
@@ -28,6 +28,7 @@ CycleEnclosure two_cycle(const ComplexRational& c) {
   Acb root = ball_around(affine(-3, -4, c), kClosedFormBits);
   acb_sqrt(root, root, kClosedFormBits);
   CycleEnclosure cycle;
+  cycle.period = 2;
   for (int sign : {1, -1}) {
     Acb point = root;
     if (sign < 0) acb_neg(point, point);
@@ -39,15 +40,18 @@ CycleEnclosure two_cycle(const ComplexRational& c) {
   return cycle;
 }
 
-std::optional<CycleEnclosure> around_disc(const ComplexRational& c, const AttractingDisc& by) {
+std::optional<CycleEnclosure> around_disc(const ComplexRational& c, const AttractingDisc& by,
+                                          std::size_t most_points) {
   const slong bits = by.bits;
   OrbitEnclosure orbit(Point{c}, by.disc, bits);
   CycleEnclosure cycle;
+  cycle.period = by.period;
   arf_one(cycle.multiplier.re);
   while (orbit.index() < by.period) {
-    cycle.points.push_back(orbit.range());
+    const DiscEnclosure point = orbit.range();
+    if (cycle.points.size() < most_points) cycle.points.push_back(point);
     DiscEnclosure factor;
-    twice(factor, cycle.points.back());
+    twice(factor, point);
     multiply(cycle.multiplier, cycle.multiplier, factor, bits);
     if (!orbit.step()) return std::nullopt;
   }
@@ -56,8 +60,9 @@ std::optional<CycleEnclosure> around_disc(const ComplexRational& c, const Attrac
 
 }  // namespace
 
-std::optional<CycleEnclosure> enclose_cycle(const ComplexRational& c, const Rule& inside_by) {
-  if (const auto* by = std::get_if<AttractingDisc>(&inside_by)) return around_disc(c, *by);
+std::optional<CycleEnclosure> enclose_cycle(const ComplexRational& c, const Rule& inside_by,
+                                            std::size_t most_points) {
+  if (const auto* by = std::get_if<AttractingDisc>(&inside_by)) return around_disc(c, *by, most_points);
   if (const auto* by = std::get_if<ClosedForm>(&inside_by)) return by->period == 1 ? fixed_point(c) : two_cycle(c);
   return std::nullopt;
 }

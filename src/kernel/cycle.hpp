@@ -1,4 +1,6 @@
 #pragma once
+#include <cstddef>
+#include <cstdint>
 #include <optional>
 #include <vector>
 
@@ -9,13 +11,15 @@ namespace merestone {
 
 /// The attracting cycle of a parameter and its multiplier, enclosed.
 struct CycleEnclosure {
-  std::vector<DiscEnclosure> points;  // one for each point of the cycle, in the order of the dynamics
+  std::vector<DiscEnclosure> points;  // the first points of the cycle, in the order of the dynamics
+  std::uint64_t period = 0;           // how many there are
   DiscEnclosure multiplier;
 };
 
-/// Encloses the attracting cycle of c (Lemma C1).
+/// Encloses the attracting cycle of c and its multiplier, and keeps at most so many of the cycle's points (Lemma C1).
 /// Requires: the rule is AttractingDisc or ClosedForm and establishes that c is inside.
 /// On failure (nothing): another rule, or an orbit of the disc that is lost.
-std::optional<CycleEnclosure> enclose_cycle(const ComplexRational& c, const Rule& inside_by);
+std::optional<CycleEnclosure> enclose_cycle(const ComplexRational& c, const Rule& inside_by,
+                                            std::size_t most_points = SIZE_MAX);
 
 }  // namespace merestone

@@ -39,7 +39,7 @@ void twice(DiscEnclosure& out, const DiscEnclosure& a);
 /// Encloses a - b.
 DiscEnclosure difference(const DiscEnclosure& a, const DiscEnclosure& b, slong bits);
 
-// Comparisons: true is a proof, false says nothing.
+// Comparisons and bounds (Lemma B2): true is a proof, false says nothing.
 
 /// |z| > bound for every z of the disc. Requires bound >= 0.
 bool certainly_beyond(const DiscEnclosure& z, const Dyadic& bound);

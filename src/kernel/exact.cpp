@@ -45,6 +45,13 @@ Dyadic Dyadic::scaled(const Integer& mantissa, long exponent) {
   return d;
 }
 
+bool Dyadic::is_moderate() const {
+  constexpr slong kMost = 400'000;
+  if (arf_is_zero(held_)) return true;
+  return arf_is_finite(held_) && arf_cmpabs_2exp_si(held_, kMost) < 0 && arf_cmpabs_2exp_si(held_, -kMost) > 0 &&
+         arf_bits(held_) <= kMost;
+}
+
 Rational Dyadic::to_rational() const {
   Integer mantissa, exponent, power;
   arf_get_fmpz_2exp(mantissa, exponent, held_);

@@ -52,7 +52,9 @@ class Dyadic {
   int sign() const { return arf_sgn(held_); }
   /// Bits of the odd mantissa; 0 for zero.
   slong bits() const { return arf_bits(held_); }
-  /// Requires an exponent of a size that memory can hold: the format admits no other.
+  /// Finite, with an exponent and a mantissa of at most 400,000 bits in size: more than certificates admit.
+  bool is_moderate() const;
+  /// Requires is_moderate().
   Rational to_rational() const;
   const arf_struct* raw() const { return held_; }
 

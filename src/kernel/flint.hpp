@@ -1,4 +1,6 @@
 #pragma once
+#include "kernel/ieee754.hpp"
+
 // The one place that knows both layouts of the ball-arithmetic library: separate (Arb 2) or inside FLINT 3.
 
 #if __has_include(<flint/arb.h>)
@@ -15,8 +17,4 @@
 #include <flint/fmpq.h>
 #include <flint/fmpz.h>
 #include <mag.h>
-#endif
-
-#ifdef __FAST_MATH__
-#error "merestone must not be compiled with -ffast-math: its proofs rest on IEEE 754 arithmetic"
 #endif

@@ -30,8 +30,8 @@ class OrbitEnclosure {
 
   slong bits_;
   std::uint64_t index_ = 0;
-  DiscEnclosure centre_;      // c0
-  Mag spread_;                // every c of the region has |c - c0| <= spread_ + radius of centre_
+  DiscEnclosure centre_;      // contains c0
+  Mag spread_;                // every c of the region has |c - c0| <= spread_
   bool is_point_;             // spread_ = 0
   DiscEnclosure z_, d_;       // Z_n, D_n
   Mag remainder_;             // R_n

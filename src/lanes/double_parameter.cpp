@@ -10,8 +10,19 @@ struct Rounded {
   double value, error;
 };
 
-// The nearest double and an upper bound of the distance to it.
+// For numerator and denominator of one word: three roundings of at most 2^-53 in proportion, none where all is exact.
+std::optional<Rounded> quickly_rounded(const Rational& r) {
+  if (COEFF_IS_MPZ(*r.numerator()) || COEFF_IS_MPZ(*r.denominator())) return std::nullopt;
+  const slong numerator = *r.numerator(), denominator = *r.denominator();
+  constexpr slong kExact = slong{1} << 53;
+  const bool is_exact = -kExact <= numerator && numerator <= kExact && (denominator & (denominator - 1)) == 0;
+  const double value = static_cast<double>(numerator) / static_cast<double>(denominator);
+  return Rounded{value, is_exact ? 0 : 0x1p-51 * std::abs(value)};
+}
+
+// A double near r and an upper bound of the distance to it.
 Rounded rounded(const Rational& r) {
+  if (const auto quick = quickly_rounded(r)) return *quick;
   constexpr slong kBits = 64;
   Acb ball;
   arb_struct* x = acb_realref(ball.raw());
@@ -23,19 +34,15 @@ Rounded rounded(const Rational& r) {
   arb_sub_arf(x, x, nearest, kBits);
   Mag distance;
   arb_get_mag(distance, x);
-  out.error = mag_get_d(distance);
-  // mag_get_d rounds up but for underflow
-  if (out.error == 0 && !mag_is_zero(distance)) out.error = 0x1p-1074;
+  out.error = mag_get_d(distance);  // rounds up, never to 0
   return out;
 }
 
 }  // namespace
 
 std::optional<DoubleParameter> enclose_in_double(const ComplexRational& c) {
-  static const Rational kMost(4);
-  for (const Rational* part : {&c.re, &c.im})
-    if (*part > kMost || -*part > kMost) return std::nullopt;
   const Rounded re = rounded(c.re), im = rounded(c.im);
+  if (!(std::abs(re.value) <= 4 && std::abs(im.value) <= 4)) return std::nullopt;
   const double sum = re.error + im.error;
   return DoubleParameter{re.value, im.value, sum > 0 ? std::nextafter(sum, 1.0) : 0};
 }

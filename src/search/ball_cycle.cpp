@@ -71,9 +71,9 @@ bool approx_fixed_point(const ApproxReturn& f, Acb& z, std::uint64_t period, Dea
   return false;
 }
 
-std::uint64_t approx_least_period(const ApproxReturn& f, const Acb& z, std::uint64_t period) {
+std::uint64_t approx_least_period(const ApproxReturn& f, const Acb& z, std::uint64_t period, Deadline& deadline) {
   Acb w = z, offset;
-  for (std::uint64_t k = 1; k < period; ++k) {
+  for (std::uint64_t k = 1; k < period && !deadline.passed(); ++k) {
     f.step(w);
     if (period % k != 0) continue;
     acb_sub(offset, w, z, f.bits());
@@ -104,12 +104,13 @@ std::optional<AttractingDisc> find_attracting_disc(const ComplexRational& c, con
   arb_set_arf(acb_realref(z.raw()), start.re);
   arb_set_arf(acb_imagref(z.raw()), start.im);
   if (!approx_fixed_point(f, z, approx_period, deadline)) return std::nullopt;
-  const std::uint64_t period = approx_least_period(f, z, approx_period);
+  const std::uint64_t period = approx_least_period(f, z, approx_period, deadline);
   if (!is_contracting(f, z, period, deadline)) return std::nullopt;
   Integer one;
   fmpz_one(one);
   // from a tight enclosure of the cycle to a wide one: rounding needs room, the quadratic term forbids too much of it
   for (const int eighths : {6, 5, 4, 3, 2, 1}) {
+    if (deadline.passed_now()) return std::nullopt;
     const long exponent = -static_cast<long>(bits) * eighths / 8;
     const AttractingDisc candidate{period, {midpoint(z), Dyadic::scaled(one, exponent)}, bits};
     if (std::holds_alternative<Established>(rules::attracting_disc(Point{c}, candidate))) return candidate;

@@ -1,6 +1,7 @@
 #include "search/certify.hpp"
 
 #include <cstdint>
+#include <utility>
 
 namespace merestone {
 
@@ -15,9 +16,9 @@ std::uint32_t* bits_of(Rule& rule) {
 
 }  // namespace
 
-std::optional<Claim> certify(const ComplexRational& c, const std::string& request, const Proof& proof,
+std::optional<Claim> certify(const ComplexRational& c, std::optional<std::string> request, const Proof& proof,
                              const Limits& limits) {
-  Claim claim{proof.statement, Point{c}, request, proof.by};
+  Claim claim{proof.statement, Point{c}, std::move(request), proof.by};
   std::uint32_t* bits = bits_of(claim.by);
   for (std::uint64_t trial = 64; trial <= limits.bits; trial *= 2) {
     if (bits != nullptr) *bits = static_cast<std::uint32_t>(trial);

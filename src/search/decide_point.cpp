@@ -37,6 +37,7 @@ std::optional<Proof> preperiodic(const ComplexRational& c) {
 
 // What is known of a real parameter without an orbit.
 std::optional<Proof> on_the_axis(const ComplexRational& c) {
+  if (c.im.sign() != 0) return std::nullopt;
   if (holds(rules::real_segment_member(Point{c}))) return Proof{Member{}, RealSegment{}};
   if (holds(rules::real_segment_outside(Point{c}))) return Proof{Outside{}, RealSegment{}};
   return std::nullopt;
@@ -69,15 +70,23 @@ std::optional<double> as_double(const Dyadic& bailout) {
   return std::nullopt;
 }
 
-Verdict in_double(const DoubleParameter& lane, const Dyadic& bailout, const SearchLimits& limits, Deadline& deadline) {
+// What double precision says, and where it expects an escape that it could not prove.
+struct DoubleVerdict {
+  Verdict verdict;
+  std::uint64_t approx_escape = 0;
+};
+
+DoubleVerdict in_double(const DoubleParameter& lane, const Dyadic& bailout, const SearchLimits& limits,
+                        Deadline& deadline) {
   const std::optional<double> radius = as_double(bailout);
-  if (!radius) return Undecided{Limit::precision, 0, kDoubleBits};
+  if (!radius) return {Undecided{Limit::precision, 0, kDoubleBits}};
   const DoubleResult result = decide_in_double(lane, *radius, limits.iterations, deadline);
-  if (const auto* escape = std::get_if<DoubleEscape>(&result)) return escape_proof(bailout, escape->index);
-  if (const auto* disc = std::get_if<DoubleDisc>(&result)) return disc_proof(*disc);
-  if (deadline.passed_now()) return Undecided{Limit::time, limits.iterations, kDoubleBits};
-  if (const auto* lost = std::get_if<DoubleLost>(&result)) return Undecided{Limit::precision, lost->index, kDoubleBits};
-  return Undecided{Limit::iterations, limits.iterations, kDoubleBits};
+  if (const auto* escape = std::get_if<DoubleEscape>(&result)) return {escape_proof(bailout, escape->index)};
+  if (const auto* disc = std::get_if<DoubleDisc>(&result)) return {disc_proof(*disc)};
+  if (deadline.passed_now()) return {Undecided{Limit::time, limits.iterations, kDoubleBits}};
+  if (const auto* lost = std::get_if<DoubleLost>(&result))
+    return {Undecided{Limit::precision, lost->index, kDoubleBits}, lost->approx_escape};
+  return {Undecided{Limit::iterations, limits.iterations, kDoubleBits}};
 }
 
 bool wants_more_bits(const Verdict& verdict) {
@@ -85,20 +94,26 @@ bool wants_more_bits(const Verdict& verdict) {
   return undecided != nullptr && undecided->limit == Limit::precision;
 }
 
+// From here on an escape index that cannot be told is taken for one that meets the bailout exactly.
+constexpr std::uint32_t kBitsForTies = 1024;
+
 Verdict climb(const ComplexRational& c, const std::optional<DoubleParameter>& lane, const Dyadic& bailout,
               const SearchLimits& limits) {
   Deadline deadline(limits.seconds);
-  Verdict verdict = Undecided{Limit::precision, 0, kDoubleBits};
-  if (lane) verdict = in_double(*lane, bailout, limits, deadline);
-  for (std::uint32_t bits = 128; wants_more_bits(verdict) && bits <= limits.bits; bits *= 2)
-    verdict = decide_in_balls(c, bailout, limits.iterations, bits, deadline);
-  return verdict;
+  DoubleVerdict found{Undecided{Limit::precision, 0, kDoubleBits}};
+  if (lane) found = in_double(*lane, bailout, limits, deadline);
+  for (std::uint32_t bits = 128; wants_more_bits(found.verdict) && bits <= limits.bits; bits *= 2) {
+    const bool index_is_out_of_reach = bits >= kBitsForTies || 2 * bits > limits.bits;
+    found.verdict = decide_in_balls(c, bailout, {limits.iterations, bits, found.approx_escape, index_is_out_of_reach},
+                                    deadline);
+  }
+  return found.verdict;
 }
 
 }  // namespace
 
 Verdict decide_point(const ComplexRational& c, const DecideOptions& options) {
-  const std::optional<DoubleParameter> lane = enclose_in_double(c);
+  const auto lane = rounds_to_nearest() ? enclose_in_double(c) : std::nullopt;
   if (auto proof = closed_form(c, lane)) return *proof;
   if (auto proof = preperiodic(c)) return *proof;
   const std::optional<Proof> known = on_the_axis(c);

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <optional>
 
+#include "lanes/short_escape.hpp"
 #include "lanes/tracked_orbit.hpp"
 #include "search/return_watch.hpp"
 
@@ -54,7 +55,7 @@ class DoubleStage {
     if (stays) return std::nullopt;
     lost_index_ = n;
     if (z.modulus > 2 && before.certainly_within(2) && z.certainly_beyond(2)) return leave(before);
-    if (z.modulus > 2) return DoubleLost{n};
+    if (z.modulus > 2) return DoubleLost{n, n};
     lost_ = true;
     return std::nullopt;
   }
@@ -62,12 +63,13 @@ class DoubleStage {
   // Beyond radius 2 the orbit only grows: on to the bailout, with errors of any size.
   DoubleResult leave(TrackedValue before) {
     while (!z_.certainly_beyond(bailout_)) {
-      if (!z_.certainly_within(bailout_) || index_ == iterations_) return DoubleLost{index_};
+      if (index_ == iterations_) return DoubleLimit{};
+      if (!z_.certainly_within(bailout_)) return DoubleLost{index_, index_};
       before = z_;
       z_ = next_tracked(z_, c_);
       ++index_;
     }
-    if (!before.certainly_within(bailout_)) return DoubleLost{index_};
+    if (!before.certainly_within(bailout_)) return DoubleLost{index_, index_};
     return DoubleEscape{index_};
   }
 
@@ -84,12 +86,12 @@ class DoubleStage {
       const std::uint64_t end = std::min(std::max(2 * index_, kFirstWindow), iterations_);
       for (; index_ < end; ++index_) {
         z_ = detail::rounded_next(z_, c_);
-        if (!(z_.modulus <= 2)) return DoubleLost{lost_index_};
+        if (!(z_.modulus <= 2)) return DoubleLost{lost_index_, index_ + 1};
         watch.take(z_.x, z_.y);
       }
       if (auto disc = try_cycle(watch)) return *disc;
     }
-    return DoubleLost{lost_index_};
+    return DoubleLost{lost_index_, 0};
   }
 
   DoubleParameter c_;
@@ -104,6 +106,8 @@ class DoubleStage {
 }  // namespace
 
 DoubleResult decide_in_double(const DoubleParameter& c, double bailout, std::uint64_t iterations, Deadline& deadline) {
+  if (bailout == 2)
+    if (const std::uint64_t index = short_escape(c, iterations); index > 0) return DoubleEscape{index};
   return DoubleStage(c, bailout, iterations, deadline).run();
 }
 

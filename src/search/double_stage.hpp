@@ -15,6 +15,8 @@ struct DoubleEscape {
 /// Double precision proves nothing more: the error grew too large, or the escape is too close to call.
 struct DoubleLost {
   std::uint64_t index = 0;
+  /// Where the orbit, followed on without proof, left the disc of radius 2; 0 when it did not.
+  std::uint64_t approx_escape = 0;
 };
 /// The orbit was followed to the limit and stayed.
 struct DoubleLimit {};

@@ -37,7 +37,7 @@ Outcome attracting_disc(const Region& region, const AttractingDisc& by) {
   while (orbit.index() < by.period) {
     multiplier.take(orbit.range());
     if (!orbit.step())
-      return NotEstablished{"the enclosure of f^" + std::to_string(orbit.index()) + " of the disc is wider than 1"};
+      return NotEstablished{"the enclosure of f^" + std::to_string(orbit.index()) + " of the disc is wider than 1 or beyond 2^64"};
     for (const std::uint64_t k : shorter)
       if (k == orbit.index() && !certainly_beyond(difference(orbit.range(), start_disc, by.bits), Dyadic()))
         return NotEstablished{"the disc and its image under f^" + std::to_string(k) +

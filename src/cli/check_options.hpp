@@ -1,0 +1,33 @@
+#pragma once
+#include <CLI/CLI.hpp>
+#include <cstdint>
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "kernel/check.hpp"
+#include "kernel/result.hpp"
+
+namespace merestone {
+
+/// Seeds end here, so that every reader of JSON has them exactly.
+inline constexpr std::uint64_t kLargestSeed = (std::uint64_t{1} << 53) - 1;
+
+/// The words of merestone-check, as typed.
+struct CheckWords {
+  std::vector<std::string> files;
+  bool json = false, all = false, quiet = false;
+  /// Work that the claims of one file may imply together, in the units of Limits::work; and bits for one claim.
+  std::uint64_t max_work = 10'000'000'000;
+  std::uint32_t max_bits = Limits{}.bits;
+  unsigned threads = 0;
+  std::optional<std::uint64_t> sample, seed;
+};
+
+/// Adds the options to the program; `words` must outlive the parsing.
+void add_check_options(CLI::App& program, CheckWords& words);
+
+/// The failure when the words do not go together.
+std::optional<Failure> problem_of(const CheckWords& words);
+
+}  // namespace merestone

@@ -13,6 +13,7 @@
 #include "cli/decide_points.hpp"
 #include "cli/decide_tally.hpp"
 #include "cli/expectation.hpp"
+#include "cli/interruption.hpp"
 #include "cli/provenance.hpp"
 #include "cli/shared_output.hpp"
 #include "cli/shared_progress.hpp"
@@ -42,7 +43,7 @@ class DecideRun {
   DecideRun(const DecideWords& words, DecideRequest request, DecidePoints points, std::optional<CertificateFile> file)
       : words_(words), request_(std::move(request)), points_(std::move(points)), file_(std::move(file)) {}
 
-  ExitCode run();
+  int run();
 
  private:
   std::optional<std::vector<PointLine>> next_batch();
@@ -70,10 +71,11 @@ class DecideRun {
   std::mutex code_mutex_;
   ExitCode code_ = ExitCode::established;
   std::atomic<bool> stopped_ = false;
+  std::optional<Interruption> interruption_;
 };
 
 std::optional<std::vector<PointLine>> DecideRun::next_batch() {
-  if (stopped_) return std::nullopt;
+  if (stopped_ || Interruption::signal() != 0) return std::nullopt;
   Result<std::vector<PointLine>> batch = points_.next();
   if (!batch) {  // the list ends here; what was read of it is answered
     report(ExitCode::io_failed, batch.failure().message);
@@ -178,14 +180,17 @@ void DecideRun::finish_certificate() {
 
 void DecideRun::finish() {
   progress_.wipe();
-  if (tally_.all() == 0 && code_ == ExitCode::established)
+  if (Interruption::signal() != 0)
+    fmt::print(stderr, "merestone: interrupted; the answers up to here are complete\n");
+  else if (tally_.all() == 0 && code_ == ExitCode::established)
     return fail(ExitCode::malformed, words_.list + ": holds no parameter; write one a line, such as -0.75+0.1i");
   if (points_.is_list() && !words_.json && !words_.quiet) output_.write(tally_.in_words() + "\n");
   if (file_) finish_certificate();
   if (output_.failed()) fail(ExitCode::io_failed, "standard output cannot be written");
 }
 
-ExitCode DecideRun::run() {
+int DecideRun::run() {
+  if (points_.is_list()) interruption_.emplace();
   const unsigned threads = words_.threads > 0 ? words_.threads : allowed_threads();
   const tbb::global_control control(tbb::global_control::max_allowed_parallelism, threads);
   const auto read = [this](tbb::flow_control& flow) {
@@ -201,17 +206,17 @@ ExitCode DecideRun::run() {
           tbb::make_filter<Reply, void>(tbb::filter_mode::serial_in_order,
                                         [this](Reply reply) { print(std::move(reply)); }));
   if (!stopped_) finish();
-  return code_;
+  return Interruption::signal() != 0 ? 128 + Interruption::signal() : static_cast<int>(code_);
 }
 
-ExitCode refuse(ExitCode code, const Failure& failure) {
+int refuse(ExitCode code, const Failure& failure) {
   fmt::print(stderr, "merestone: {}\n", failure.message);
-  return code;
+  return static_cast<int>(code);
 }
 
 }  // namespace
 
-ExitCode run_decide(const DecideWords& words, const std::string& command_line) {
+int run_decide(const DecideWords& words, const std::string& command_line) {
   Result<DecideRequest> request = read_decide_words(words);
   if (!request) return refuse(ExitCode::malformed, request.failure());
   Result<DecidePoints> points = DecidePoints::open(words.points, words.list);

@@ -48,7 +48,7 @@ int run(int count, char** words) {
       ->transform(CLI::CheckedTransformer(manual_formats()))
       ->type_name("{man,bash,zsh,fish}");
   if (const auto code = parse_words(program, arguments(count, words))) return static_cast<int>(*code);
-  if (decide->parsed()) return static_cast<int>(run_decide(decide_words, joined(count, words)));
+  if (decide->parsed()) return run_decide(decide_words, joined(count, words));
   Output output;
   output.write(manual(program, format));
   return static_cast<int>(output.failed() ? ExitCode::io_failed : ExitCode::established);

@@ -1,6 +1,7 @@
 #include "cli/points_input.hpp"
 
 #include <fcntl.h>
+#include <poll.h>
 #include <sys/stat.h>
 #include <unistd.h>
 
@@ -9,6 +10,7 @@
 #include <cstring>
 #include <string_view>
 
+#include "cli/interruption.hpp"
 #include "cli/shared_arguments.hpp"
 #include "kernel/typed_number.hpp"
 
@@ -17,6 +19,7 @@ namespace merestone {
 namespace {
 
 constexpr std::size_t kReadAtOnce = 1 << 16;
+constexpr int kLookAfterMilliseconds = 200;
 constexpr std::size_t kLongestLine = 2 * kLongestTypedNumber + 1024;
 
 Failure system_failure(const std::string& name) { return {name + ": " + std::strerror(errno)}; }
@@ -72,8 +75,17 @@ void PointsInput::cut_long_line() {
   if (end > kLongestLine) buffer_.replace(kLongestLine, end - kLongestLine, "?");
 }
 
-// Reads what there is; false at the end of the input.
+// Waits until there is something to read; false when the wait was interrupted.
+bool PointsInput::wait() const {
+  pollfd ready{descriptor_, POLLIN, 0};
+  while (Interruption::signal() == 0)
+    if (::poll(&ready, 1, kLookAfterMilliseconds) != 0 && (ready.revents != 0 || errno != EINTR)) return true;
+  return false;
+}
+
+// Reads what there is; false at the end of the input, which an interruption is too.
 Result<bool> PointsInput::fill() {
+  if (!wait()) return false;
   buffer_.erase(0, consumed_);
   consumed_ = 0;
   const std::size_t before = buffer_.size();

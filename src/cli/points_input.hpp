@@ -24,6 +24,7 @@ class PointsInput {
   PointsInput& operator=(PointsInput&&) = delete;
   ~PointsInput();
 
+  /// An interruption (interruption.hpp) ends the list.
   /// Up to `most` of the lines that are there, at least one unless the list has ended.
   /// A line that is longer than any number comes as its beginning, which no reader of numbers takes.
   /// On failure: the input cannot be read.
@@ -35,6 +36,7 @@ class PointsInput {
   void take_lines(std::vector<PointLine>& lines, std::size_t most);
   void take_line(std::string_view text, std::vector<PointLine>& lines);
   void cut_long_line();
+  bool wait() const;
   Result<bool> fill();
 
   int descriptor_;

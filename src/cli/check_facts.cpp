@@ -50,16 +50,18 @@ class Facts {
     for (const std::uint64_t k : proper_prime_cofactors(by.period))
       powers += fmt::format("{}{}", powers.empty() ? "" : ", ", k);
     if (!powers.empty())
-      facts.push_back({fmt::format("the disc and its image under f_c^k are disjoint for k = {}: the period is exactly {}",
-                                   powers, by.period),
-                       {}});
+      facts.push_back(
+          {fmt::format("the disc and its image under f_c^k are disjoint for k = {}: the period is exactly {}", powers,
+                       by.period),
+           {}});
     return facts;
   }
 
   std::vector<Fact> operator()(const ClosedForm& by) const {
     const char* const relation = std::holds_alternative<Inside>(claim_.statement) ? "<" : "<=";
-    const std::string sides = by.period == 1 ? fmt::format("q (q + x - 1/4) {} y^2/4 with q = (x - 1/4)^2 + y^2", relation)
-                                             : fmt::format("(x + 1)^2 + y^2 {} 1/16", relation);
+    const std::string sides = by.period == 1
+                                  ? fmt::format("q (q + x - 1/4) {} y^2/4 with q = (x - 1/4)^2 + y^2", relation)
+                                  : fmt::format("(x + 1)^2 + y^2 {} 1/16", relation);
     return {{fmt::format("{}{}, c = x + i y, in exact arithmetic", sides, throughout()), {}}};
   }
 
@@ -70,7 +72,8 @@ class Facts {
   }
 
   std::vector<Fact> operator()(const Preperiodic& by) const {
-    return {{fmt::format("z_{} = z_{} in exact arithmetic", std::uint64_t{by.preperiod} + by.period, by.preperiod), {}}};
+    return {
+        {fmt::format("z_{} = z_{} in exact arithmetic", std::uint64_t{by.preperiod} + by.period, by.preperiod), {}}};
   }
 
  private:

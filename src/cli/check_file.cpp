@@ -73,7 +73,7 @@ bool FileCheck::deliver(const Batch& batch) {
 FileCheck::Ended FileCheck::establish_all(ClaimSource& source) {
   const BatchReport report{[this](Batch& batch) { report_.prepare(batch); },
                            [this](Batch& batch) { return deliver(batch); }};
-  return check_claims(source, {words_.max_work, words_.max_bits}, threads_, report);
+  return check_claims(source, words_.limits, threads_, report);
 }
 
 FileCheck::Ended FileCheck::read_only(ClaimSource& source) const {
@@ -128,7 +128,8 @@ ExitCode FileCheck::run() {
   const bool is_container = source.peek() == static_cast<unsigned char>(kContainerMagic.front());
   progress_.emplace([this](double seconds) {
     const std::uint64_t done = report_.claims_done();
-    return fmt::format("{}: {}, {:.0f} s", file_in_words(path_), done == 0 ? "reading" : grouped(done) + " claims", seconds);
+    return fmt::format("{}: {}, {:.0f} s", file_in_words(path_), done == 0 ? "reading" : grouped(done) + " claims",
+                       seconds);
   });
   const Ended ended = is_container ? check_container(std::move(source)) : check_document(std::move(source));
   progress_.reset();

@@ -36,7 +36,8 @@ void put_proof(ordered_json& object, const Claim& claim, const Established& esta
     object["proved"].push_back(std::move(entry));
   }
   object["figures"] = ordered_json::object();
-  for (const Figure& figure : established.figures) object["figures"][figure.name] = interval(figure.lower, figure.upper);
+  for (const Figure& figure : established.figures)
+    object["figures"][figure.name] = interval(figure.lower, figure.upper);
   object["lemmas"] = established.lemmas;
 }
 

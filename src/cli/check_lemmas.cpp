@@ -25,7 +25,8 @@ constexpr std::array kLemmas = {
 }  // namespace
 
 std::string lemma_in_words(const std::string& number) {
-  const auto* const found = std::find_if(kLemmas.begin(), kLemmas.end(), [&](const Lemma& l) { return l.number == number; });
+  const auto* const found =
+      std::find_if(kLemmas.begin(), kLemmas.end(), [&](const Lemma& l) { return l.number == number; });
   if (found == kLemmas.end()) return number;
   return number + " (" + std::string(found->words) + ")";
 }

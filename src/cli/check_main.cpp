@@ -1,6 +1,7 @@
 #include <exception>
 #include <new>
 
+#include "cli/check_memory.hpp"
 #include "cli/check_message.hpp"
 #include "cli/check_options.hpp"
 #include "cli/check_run.hpp"
@@ -22,7 +23,8 @@ ExitCode print(std::string_view text) {
 
 ExitCode run(int count, char** words) {
   CLI::App program("", "merestone-check");
-  program.set_version_flag("--version", std::string("merestone-check ") + kProgramVersion, "Print the version and exit");
+  program.set_version_flag("--version", std::string("merestone-check ") + kProgramVersion,
+                           "Print the version and exit");
   program.set_help_flag("-h,--help", "Print this help and exit");
   CheckWords check_words;
   add_check_options(program, check_words);
@@ -43,10 +45,11 @@ ExitCode run(int count, char** words) {
 }  // namespace
 
 int main(int count, char** words) {
+  end_when_memory_ends();
   try {
     return static_cast<int>(run(count, words));
   } catch (const std::bad_alloc&) {
-    complain("out of memory; allow fewer --threads");
+    out_of_memory();
   } catch (const std::exception& error) {
     complain(error.what());
   }

@@ -7,13 +7,15 @@ namespace merestone {
 
 namespace {
 
+constexpr std::uint64_t kMostWork = 1'000'000'000'000'000'000;
+
 constexpr const char* kDescription =
     R"(Establishes anew, with enclosures, every claim that certificates make about the Mandelbrot set M.
 
 A certificate holds claims (this parameter, or every parameter of this region, lies outside M; in the interior of M;
 in M; leaves the disc of this radius at exactly this step) and hints for their proofs. Nothing in it is believed: each
 claim is established from its exact numbers by the theorem that its rule names, in arithmetic whose rounding errors are
-bounded. What is not established is reported, and says nothing about the truth of the claim.
+bounded. A claim that is not established is reported; that does not say that it is false.
 
 This program shares no code with the search that found the claims.
 )";
@@ -33,9 +35,15 @@ constexpr const char* kFooter = R"(Examples:
       for scripts: nothing is printed unless something is wrong
 
 Limits:
-  A unit of work is one step of an orbit in 64 bits, about 0.3 microseconds; a step in more bits counts for more. The
-  default --max-work lets a file cost up to 50 minutes of one processor. What a claim costs is read off it beforehand:
-  claims that would go over a limit are refused and reported, the others are established.
+  A unit of work is one step of an orbit in 64 bits, at most about 0.3 microseconds; steps in more bits and arithmetic
+  with long numbers count for more. With the default --max-work a claim takes 5 minutes of one processor at most, and a
+  file 50. What a claim implies is read off it beforehand: claims that go over a limit are refused and reported, the
+  others are established.
+
+JSON objects:
+  of a claim  file, claim (its position, from 0), words, request, outcome, rule; proved, figures and lemmas, or reason
+  of a file   file, claims, sample, established, not_established, over_limit, claims_digest, exit; it stands last
+  of a file that could not be read to its end   file, fault (malformed, newer, input), message, exit
 
 Exit codes:
   0  every claim was established
@@ -54,10 +62,13 @@ void add_output(CLI::App& program, CheckWords& words) {
 }
 
 void add_limits(CLI::App& program, CheckWords& words) {
-  program.add_option("--max-work", words.max_work, "Most work that the claims of one file may imply together")
+  program
+      .add_option("--max-work", words.limits.work,
+                  "Most work that one claim may imply; all of a file may imply 10 times as much")
       ->type_name("N")
+      ->check(CLI::Range(std::uint64_t{1}, kMostWork).description(""))
       ->capture_default_str();
-  program.add_option("--max-bits", words.max_bits, "Most bits of working precision")
+  program.add_option("--max-bits", words.limits.bits, "Most bits of working precision")
       ->type_name("N")
       ->check(CLI::Range(2U, std::numeric_limits<std::uint32_t>::max()).description(""))
       ->capture_default_str();
@@ -67,7 +78,8 @@ void add_limits(CLI::App& program, CheckWords& words) {
 }
 
 void add_sampling(CLI::App& program, CheckWords& words) {
-  auto* const sample = program.add_option("--sample", words.sample, "Establish only N claims of each file, drawn at random");
+  auto* const sample =
+      program.add_option("--sample", words.sample, "Establish only N claims of each file, drawn at random");
   sample->type_name("N")->check(CLI::Range(std::uint64_t{1}, std::uint64_t{1} << 53).description(""));
   program.add_option("--seed", words.seed, "Repeat the draw that was printed with this seed; a fresh one by default")
       ->type_name("S")
@@ -88,11 +100,13 @@ void add_check_options(CLI::App& program, CheckWords& words) {
 }
 
 std::optional<Failure> problem_of(const CheckWords& words) {
-  if (words.files.empty()) return Failure{"no file was given; name a certificate, such as list.mere.json, or - for standard input"};
+  if (words.files.empty())
+    return Failure{"no file was given; name a certificate, such as list.mere.json, or - for standard input"};
   if (std::count(words.files.begin(), words.files.end(), "-") > 1)
     return Failure{"standard input (-) is given twice and can be read once; name files instead"};
   if (words.quiet && (words.json || words.all))
-    return Failure{std::string("--quiet prints no claims and ") + (words.json ? "--json" : "--all") + " does; give one of them"};
+    return Failure{std::string("--quiet prints no claims and ") + (words.json ? "--json" : "--all") +
+                   " does; give one of them"};
   return std::nullopt;
 }
 

@@ -17,9 +17,7 @@ inline constexpr std::uint64_t kLargestSeed = (std::uint64_t{1} << 53) - 1;
 struct CheckWords {
   std::vector<std::string> files;
   bool json = false, all = false, quiet = false;
-  /// Work that the claims of one file may imply together, in the units of Limits::work; and bits for one claim.
-  std::uint64_t max_work = 10'000'000'000;
-  std::uint32_t max_bits = Limits{}.bits;
+  Limits limits;  // of one claim
   unsigned threads = 0;
   std::optional<std::uint64_t> sample, seed;
 };

@@ -6,11 +6,9 @@
 #include <oneapi/tbb/parallel_pipeline.h>
 
 #include <atomic>
-#include <limits>
 #include <memory>
 
 #include "cli/check_budget.hpp"
-#include "cli/check_exact_work.hpp"
 
 namespace merestone {
 
@@ -20,15 +18,10 @@ namespace tbb = oneapi::tbb;
 
 struct Job {
   Batch batch;
-  std::vector<std::uint64_t> work;     // of each chosen claim
-  std::vector<std::size_t> admitted;   // which of them are within the limits
+  std::vector<std::uint64_t> work;    // of each chosen claim
+  std::vector<std::size_t> admitted;  // which of them are within the limits
 };
 using JobPointer = std::shared_ptr<Job>;
-
-std::uint64_t implied_work(const Claim& claim) {
-  const std::uint64_t steps = work_of(claim), exact = exact_work_of(claim);
-  return steps > std::numeric_limits<std::uint64_t>::max() - exact ? std::numeric_limits<std::uint64_t>::max() : steps + exact;
-}
 
 class Pipeline {
  public:
@@ -93,7 +86,7 @@ JobPointer Pipeline::open(JobPointer job) const {
     CheckedClaim& checked = batch.checked.emplace_back();
     checked.position = batch.first + i;
     checked.claim = &batch.claims[i];
-    job->work.push_back(implied_work(batch.claims[i]));
+    job->work.push_back(work_of(batch.claims[i]));
   }
   return job;
 }
@@ -137,16 +130,17 @@ std::optional<CertificateEnded> Pipeline::run(unsigned threads) {
   using tbb::filter_mode;
   tbb::parallel_pipeline(
       threads * source_.batches_for_a_thread(),
-      tbb::make_filter<void, JobPointer>(filter_mode::serial_in_order,
-                                         [this](tbb::flow_control& control) { return read(control); }) &
-          tbb::make_filter<JobPointer, JobPointer>(filter_mode::parallel,
-                                                   [this](JobPointer job) { return open(std::move(job)); }) &
-          tbb::make_filter<JobPointer, JobPointer>(filter_mode::serial_in_order,
-                                                   [this](JobPointer job) { return admit(std::move(job)); }) &
-          tbb::make_filter<JobPointer, JobPointer>(
-              filter_mode::parallel, [this](JobPointer job) { return establish_admitted(std::move(job)); }) &
-          tbb::make_filter<JobPointer, void>(filter_mode::serial_in_order,
-                                             [this](const JobPointer& job) { deliver(job); }));
+      tbb::make_filter<void, JobPointer>(filter_mode::serial_in_order, [this](tbb::flow_control& control) {
+        return read(control);
+      }) & tbb::make_filter<JobPointer, JobPointer>(filter_mode::parallel, [this](JobPointer job) {
+        return open(std::move(job));
+      }) & tbb::make_filter<JobPointer, JobPointer>(filter_mode::serial_in_order, [this](JobPointer job) {
+        return admit(std::move(job));
+      }) & tbb::make_filter<JobPointer, JobPointer>(filter_mode::parallel, [this](JobPointer job) {
+        return establish_admitted(std::move(job));
+      }) & tbb::make_filter<JobPointer, void>(filter_mode::serial_in_order, [this](const JobPointer& job) {
+        deliver(job);
+      }));
   if (gave_up_) return std::nullopt;
   if (fault_) return *fault_;
   return *end_;

@@ -16,8 +16,9 @@ struct BatchReport {
 
 using CertificateEnded = std::variant<CertificateEnd, ReadFault>;
 
-/// Establishes the chosen claims of a source on `threads` threads; `limits.work` is for all of them together. Batches
-/// before a damaged one are delivered, none after it. Memory does not grow with the number of claims.
+/// Establishes the chosen claims of a source on `threads` threads; claims over the limits or over
+/// what a WorkBudget allows for all of them are refused. Batches before a damaged one are delivered, none after it.
+/// Memory does not grow with the number of claims.
 /// On failure (nothing): the report ended the check.
 std::optional<CertificateEnded> check_claims(ClaimSource& source, const Limits& limits, unsigned threads,
                                              const BatchReport& report);

@@ -14,13 +14,13 @@ namespace merestone {
 
 /// A stretch of a certificate's claims on its way from the file to the report.
 struct Batch {
-  std::uint64_t first = 0;               // position of its first claim
-  std::optional<StoredBlock> stored;     // of a container, until it is opened
+  std::uint64_t first = 0;            // position of its first claim
+  std::optional<StoredBlock> stored;  // of a container, until it is opened
   std::vector<Claim> claims;
-  std::vector<std::uint32_t> chosen;     // which of them are to be established
-  bool of_few = false;                   // the certificate is known to have few claims
+  std::vector<std::uint32_t> chosen;  // which of them are to be established
+  bool of_few = false;                // the certificate is known to have few claims
   std::optional<ReadFault> fault;
-  std::vector<CheckedClaim> checked;     // one for each chosen claim
+  std::vector<CheckedClaim> checked;  // one for each chosen claim
 
   // What the report makes of it.
   Tally tally;

@@ -20,9 +20,9 @@ struct Sample {
 struct FileSummary {
   std::string path;
   Tally tally;
-  std::vector<std::string> failures;    // the first ones, a line each
-  std::optional<CertificateEnd> end;    // of a certificate that is whole
-  std::optional<ReadFault> fault;       // of one that is not
+  std::vector<std::string> failures;  // the first ones, a line each
+  std::optional<CertificateEnd> end;  // of a certificate that is whole
+  std::optional<ReadFault> fault;     // of one that is not
   std::optional<Sample> sample;
 };
 

@@ -59,14 +59,17 @@ std::string claims_verdict(const FileSummary& summary) {
   const Counts total = summary.tally.total();
   const std::string drawn = summary.sample ? fmt::format(" drawn from {}", grouped(summary.end->claims)) : "";
   if (total.established < total.all()) {
-    std::string text = fmt::format("{} of {} claims{} established", grouped(total.established), grouped(total.all()), drawn);
+    std::string text =
+        fmt::format("{} of {} claims{} established", grouped(total.established), grouped(total.all()), drawn);
     if (total.not_established > 0) text += fmt::format(", {} NOT ESTABLISHED", grouped(total.not_established));
     if (total.over_limit > 0) text += fmt::format(", {} REFUSED over the limit", grouped(total.over_limit));
     return text;
   }
   if (summary.sample)
-    return fmt::format("established on a sample only: {} of {} claims", grouped(total.all()), grouped(summary.end->claims));
-  return total.all() == 1 ? "its one claim established" : fmt::format("all {} claims established", grouped(total.all()));
+    return fmt::format("established on a sample only: {} of {} claims", grouped(total.all()),
+                       grouped(summary.end->claims));
+  return total.all() == 1 ? "its one claim established"
+                          : fmt::format("all {} claims established", grouped(total.all()));
 }
 
 }  // namespace
@@ -79,7 +82,8 @@ std::string identity_paragraph(const FileSummary& summary) {
   std::string text;
   if (summary.sample) {
     text += fmt::format("  drawn with --seed {}\n", summary.sample->seed);
-    if (summary.sample->fresh && exit_code_of(summary) == ExitCode::sample_only) text += sample_meaning(*summary.sample);
+    if (summary.sample->fresh && exit_code_of(summary) == ExitCode::sample_only)
+      text += sample_meaning(*summary.sample);
   }
   return text + fmt::format("  {} {}, claims-digest {}\n", grouped(summary.end->claims),
                             summary.end->claims == 1 ? "claim" : "claims", hexadecimal(summary.end->digest));

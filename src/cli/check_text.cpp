@@ -51,7 +51,8 @@ std::string outcome_word(const Outcome& outcome) {
 std::string request_in_words(const CheckedClaim& checked) {
   const std::string typed = shortened(*checked.claim->request);
   if (!std::holds_alternative<Established>(checked.outcome)) return typed;
-  return typed + (std::holds_alternative<Point>(checked.claim->region) ? ", exactly this c" : ", which is one of these c");
+  return typed +
+         (std::holds_alternative<Point>(checked.claim->region) ? ", exactly this c" : ", which is one of these c");
 }
 
 std::string outcome_rows(const CheckedClaim& checked) {
@@ -64,10 +65,10 @@ std::string outcome_rows(const CheckedClaim& checked) {
 }
 
 std::string reason_of(const Outcome& outcome) {
-  return std::visit(Overloaded{[](const Established&) { return std::string(); },
-                               [](const NotEstablished& n) { return n.reason; },
-                               [](const OverLimit& o) { return o.reason; }},
-                    outcome);
+  return std::visit(
+      Overloaded{[](const Established&) { return std::string(); }, [](const NotEstablished& n) { return n.reason; },
+                 [](const OverLimit& o) { return o.reason; }},
+      outcome);
 }
 
 }  // namespace
@@ -76,8 +77,10 @@ std::string program_in_words() { return fmt::format("merestone-check {}, FLINT {
 
 std::string notation_in_words() {
   return "f_c(z) = z^2 + c, z_0 = 0, z_(n+1) = f_c(z_n); M is the set of the c for which the z_n stay bounded.\n"
-         "0xMpE is M times 2^E, M in hexadecimal. [a, b] encloses a real number, its ends rounded outward. A margin is the\n"
-         "difference of the two sides of an inequality. Claims are counted from 0. The lemmas stand in docs/proofs.md.\n";
+         "0xMpE is M times 2^E, M in hexadecimal. [a, b] encloses a real number, its ends rounded outward. A margin "
+         "is\n"
+         "the difference of the two sides of an inequality. Claims are counted from 0. docs/proofs.md has the "
+         "lemmas.\n";
 }
 
 std::string claim_paragraph(const CheckedClaim& checked) {

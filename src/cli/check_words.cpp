@@ -32,8 +32,8 @@ std::string complex_in_words(const Complex& z) {
 
 std::string disc_in_words(char variable, const Disc& disc) {
   const bool about_zero = disc.centre.re.sign() == 0 && disc.centre.im.sign() == 0;
-  const std::string distance = about_zero ? std::string{variable}
-                                          : fmt::format("{} - ({})", variable, complex_in_words(disc.centre));
+  const std::string distance =
+      about_zero ? std::string{variable} : fmt::format("{} - ({})", variable, complex_in_words(disc.centre));
   return fmt::format("|{}| <= {}", distance, number_in_words(disc.radius));
 }
 
@@ -68,9 +68,7 @@ std::string hints_in_words(const Rule& rule) {
                    return std::string(by.period == 1 ? "the main cardioid (period 1)" : "the disc of period 2");
                  },
                  [](const RealSegment&) { return std::string(); },
-                 [](const Preperiodic& by) {
-                   return fmt::format("preperiod {}, period {}", by.preperiod, by.period);
-                 }},
+                 [](const Preperiodic& by) { return fmt::format("preperiod {}, period {}", by.preperiod, by.period); }},
       rule);
 }
 
@@ -83,27 +81,26 @@ std::string shortened(std::string_view text) {
 }
 
 std::string region_in_words(const Region& region) {
-  return std::visit(
-      Overloaded{[](const Point& point) { return "c = " + complex_in_words(point.at); },
-                 [](const Segment& segment) {
-                   return fmt::format("every real c from {} to {}", number_in_words(segment.lo),
-                                      number_in_words(segment.hi));
-                 },
-                 [](const Disc& disc) { return "every c with " + disc_in_words('c', disc); }},
-      region);
+  return std::visit(Overloaded{[](const Point& point) { return "c = " + complex_in_words(point.at); },
+                               [](const Segment& segment) {
+                                 return fmt::format("every real c from {} to {}", number_in_words(segment.lo),
+                                                    number_in_words(segment.hi));
+                               },
+                               [](const Disc& disc) { return "every c with " + disc_in_words('c', disc); }},
+                    region);
 }
 
 std::string claim_in_words(const Claim& claim) {
   const std::string region = region_in_words(claim.region);
-  return std::visit(
-      Overloaded{[&](const Outside&) { return region + " lies outside M"; },
-                 [&](const Inside&) { return region + " lies in the interior of M"; },
-                 [&](const Member&) { return region + " lies in M"; },
-                 [&](const Count& count) {
-                   return fmt::format("for {} the first n >= 1 with |z_n| > {} is n = {}, so c lies outside M", region,
-                                      number_in_words(count.bailout.to_rational()), count.index);
-                 }},
-      claim.statement);
+  return std::visit(Overloaded{[&](const Outside&) { return region + " lies outside M"; },
+                               [&](const Inside&) { return region + " lies in the interior of M"; },
+                               [&](const Member&) { return region + " lies in M"; },
+                               [&](const Count& count) {
+                                 return fmt::format(
+                                     "for {} the first n >= 1 with |z_n| > {} is n = {}, so c lies outside M", region,
+                                     number_in_words(count.bailout.to_rational()), count.index);
+                               }},
+                    claim.statement);
 }
 
 std::string rule_in_words(const Claim& claim) {

@@ -45,7 +45,7 @@ int run(int count, char** words) {
   CLI::App* manual_command =
       program.add_subcommand("manual", "Print the manual page or the completion for a shell");
   manual_command->add_option("--format", format, "man, or the shell: bash, zsh, fish")
-      ->transform(CLI::CheckedTransformer(manual_formats()))
+      ->transform(CLI::CheckedTransformer(manual_formats()).description(""))
       ->type_name("{man,bash,zsh,fish}");
   if (const auto code = parse_words(program, arguments(count, words))) return static_cast<int>(*code);
   if (decide->parsed()) return run_decide(decide_words, joined(count, words));

@@ -90,6 +90,6 @@ TEST_CASE("a payload that inflates to more than it declares is refused") {
   ContainerWriter writer;
   PackedBlock block = *pack_block(nlohmann::json::array({to_json(member(1))}));
   block.payload_length -= 1;
-  const std::string bytes = writer.header({}) + writer.block(block) + writer.end();
+  const std::string bytes = writer.header(nlohmann::json::object()) + writer.block(block) + writer.end();
   CHECK(read(bytes).fault.find("block 0") != std::string::npos);
 }

@@ -7,7 +7,7 @@ TEST_CASE("one spelling each: what is read is spelled the same again") {
   for (const char* text : {"0x0p0", "0x1p0", "-0x3p-2", "0x1p1", "-0x1p100000", "0x1p-100000", "0xdeadbeefp-7",
                            "0x123456789abcdef123456789abcdefp-99"})
     CHECK(spell(*read_dyadic(text)) == text);
-  for (const char* text : {"0", "1", "-1", "1/2", "-17/20", "123456789012345678901234567890/7"})
+  for (const char* text : {"0", "1", "-1", "1/2", "-17/20", "123456789012345678901234567890/11"})
     CHECK(spell(*read_rational(text)) == text);
 }
 

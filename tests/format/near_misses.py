@@ -1,0 +1,84 @@
+"""Claims that miss the truth by so little that whoever forgets a rounding error takes half of them for true."""
+
+from fractions import Fraction as F
+from math import isqrt
+
+import exact_oracle
+from mutation import dyadic_text
+
+SPARE = 300  # bits to which the oracle tells |z|² from the square of the bailout
+BAILOUTS = (F(2), F(2), F(5, 2), F(2) ** 10)
+SLOW = ((F(1, 4), 0), (F(-3, 4), 0), (F(-2), 0), (F(0), F(1)), (F(-5, 4), 0), (F(-1, 8), F(3, 4)))
+
+
+def random_parameter(draw):
+    """Anywhere about M, on the axes, or near a place where escape is slow."""
+    if draw.randrange(2):
+        return F(draw.randrange(-2200, 800), 1000), F(draw.randrange(-1300, 1300), 1000)
+    corner, size = draw.choice(SLOW), 10 ** draw.randrange(1, 5)
+    return corner[0] + F(draw.randrange(-9, 10), size), corner[1] + F(draw.randrange(-9, 10), size)
+
+
+def count_claim(c, bailout, index, bits):
+    return {"claim": "count", "bailout": dyadic_text(bailout), "index": index,
+            "region": {"point": [str(c[0]), str(c[1])]}, "by": {"rule": "escape", "bits": bits}}
+
+
+def a_hair_from_the_bailout(draw, places, least, most):
+    """(c, c', bailout, n) with n from `least` to `most`: the escape index of c is n and that of c' is n + 1.
+
+    Both parameters are whole multiples of 2^-places, and as near to each other as such can be: what a checker of about
+    as many bits rounds off on the way decides on which side it finds them.
+    """
+    while True:
+        c, bailout = _on_grid(random_parameter(draw), places), draw.choice(BAILOUTS)
+        n = exact_oracle.escape_index(_value(c, places), bailout, most, SPARE)
+        if not n or n < least:
+            continue
+        size = 1 << draw.randrange(max(1, places - 24), places)
+        other = c[0] + size * draw.randrange(-9, 10) // 9, c[1] + size * draw.randrange(-9, 10) // 9
+        if pair := _narrowed(c, other, bailout, n, places):
+            return *pair, bailout, n
+
+
+def _on_grid(c, places):
+    return tuple(int(F(part) * 2**places) for part in c)
+
+
+def _value(c, places):
+    return F(c[0], 2**places), F(c[1], 2**places)
+
+
+def _narrowed(c, other, bailout, n, places):
+    """Halves the way from c to the other until they are neighbours; None if a third index turns up."""
+    middle = other
+    while True:
+        index = exact_oracle.escape_index(_value(middle, places), bailout, n + 1, SPARE)
+        if index == n:
+            c = middle
+        elif index == n + 1:
+            other = middle
+        else:
+            return None
+        if max(abs(c[0] - other[0]), abs(c[1] - other[1])) <= 1:
+            return _value(c, places), _value(other, places)
+        middle = (c[0] + other[0]) // 2, (c[1] + other[1]) // 2
+
+
+def disc_that_just_misses(draw):
+    """(false proof, true proof): discs for a real c in (0, 1/4) that just miss and clearly hold the fixed point.
+
+    With c, z and s positive the image of D(z, s) reaches farthest at f(z + s), and f(z + s) < z + s just when z + s is
+    beyond the attracting fixed point (and short of the other one).
+    """
+    c = F(draw.randrange(100, 230), 1000)
+    bits = 300
+    fixed = (2**bits - isqrt((1 - 4 * c).numerator * 4**bits // (1 - 4 * c).denominator)) // 2
+    centre = fixed * 2 // 3 >> (bits - 60) << (bits - 60)
+    def claim(radius):
+        return {"claim": "inside", "region": {"point": [str(c), "0"]}, "by": {
+            "rule": "attracting-disc", "period": 1, "bits": draw.choice([64, 512]),
+            "disc": {"centre": [dyadic_text(F(centre, 2**bits)), "0x0p0"], "radius": dyadic_text(F(radius, 2**bits))}}}
+
+    reach = fixed - centre
+    return claim(reach - (reach >> draw.randrange(20, 250))), claim(reach + (reach >> draw.randrange(16, 21)))

@@ -1,0 +1,158 @@
+"""Broken disc arithmetic, comparisons and orbits over a region (Lemmas B1, B2, E2). See mutants.py for the form."""
+
+MUTANTS = {
+    "kernel/disc_enclosure.cpp": [
+        ("product: the product of the two radii dropped",
+         "  modulus_upper(modulus, b);\n"
+         "  mag_addmul",
+         "  midpoint_modulus_upper(modulus, b);\n"
+         "  mag_addmul"),
+        ("product: a lower bound for an upper one",
+         "  mag_mul(radius, modulus, b.radius);\n",
+         "  mag_mul_lower(radius, modulus, b.radius);\n"),
+        ("product: the first factor's radius dropped",
+         "  mag_addmul(radius, modulus, a.radius);\n",
+         ""),
+        ("product: rounding dropped",
+         "arf_complex_mul(out.re, out.im, a.re, a.im, b.re, b.im, bits, ARF_RND_DOWN);\n"
+         "  out.radius = radius;\n"
+         "  add_rounding(out, (inexact & 1) != 0, (inexact & 2) != 0, bits);\n",
+         "arf_complex_mul(out.re, out.im, a.re, a.im, b.re, b.im, bits, ARF_RND_DOWN);\n"
+         "  out.radius = radius;\n"),
+        ("square: rounding dropped",
+         "arf_complex_sqr(out.re, out.im, a.re, a.im, bits, ARF_RND_DOWN);\n"
+         "  out.radius = radius;\n"
+         "  add_rounding(out, (inexact & 1) != 0, (inexact & 2) != 0, bits);\n",
+         "arf_complex_sqr(out.re, out.im, a.re, a.im, bits, ARF_RND_DOWN);\n"
+         "  out.radius = radius;\n"),
+        ("square: the wrong flag of inexactness",
+         "arf_complex_sqr(out.re, out.im, a.re, a.im, bits, ARF_RND_DOWN);\n"
+         "  out.radius = radius;\n"
+         "  add_rounding(out, (inexact & 1) != 0, (inexact & 2)",
+         "arf_complex_sqr(out.re, out.im, a.re, a.im, bits, ARF_RND_DOWN);\n"
+         "  out.radius = radius;\n"
+         "  add_rounding(out, (inexact & 1) != 0, (inexact & 1)"),
+        ("square: the squared radius dropped",
+         "  mag_add(radius, radius, a.radius);\n",
+         ""),
+        ("square: |a| r for 2 |a| r",
+         "  mag_mul_2exp_si(radius, radius, 1);\n",
+         ""),
+        ("sum: a radius dropped",
+         "  mag_add(out.radius, a.radius, b.radius);\n",
+         "  out.radius = a.radius;\n"),
+        ("sum: rounding dropped",
+         "  add_rounding(out, re_inexact != 0, im_inexact != 0, bits);\n"
+         "}\n"
+         "\n"
+         "void twice",
+         "  (void)re_inexact, (void)im_inexact;\n"
+         "}\n"
+         "\n"
+         "void twice"),
+        ("twice: radius not doubled",
+         "  mag_mul_2exp_si(out.radius, a.radius, 1);\n",
+         "  out.radius = a.radius;\n"),
+        ("rounding down counted as half a unit",
+         "arf_mag_add_ulp(z.radius, z.radius, z.re, bits)",
+         "arf_mag_add_ulp(z.radius, z.radius, z.re, bits + 1)"),
+        ("rounding of imaginary parts dropped",
+         "  if (im_inexact) arf_mag_add_ulp(z.radius, z.radius, z.im, bits);\n",
+         "  (void)im_inexact;\n"),
+        ("modulus: a lower bound for an upper one",
+         "  arf_get_mag(out, z.re);\n",
+         "  arf_get_mag_lower(out, z.re);\n"),
+        ("modulus: the larger part only",
+         "  mag_hypot(out, out, im);\n",
+         "  mag_max(out, out, im);\n"),
+        ("greatest modulus: radius dropped",
+         "  mag_add(out, out, z.radius);\n",
+         ""),
+        ("disc: radius rounded down",
+         "arf_get_mag(out.radius, disc.radius.raw())",
+         "arf_get_mag_lower(out.radius, disc.radius.raw())"),
+        ("disc: rounding of the centre dropped",
+         "  add_rounding(out, re_inexact != 0, im_inexact != 0, bits);\n"
+         "  return out;\n",
+         "  (void)re_inexact, (void)im_inexact;\n"
+         "  return out;\n"),
+        ("disc of a rectangle: inscribed, not circumscribed",
+         "mag_hypot(disc.radius,",
+         "mag_max(disc.radius,"),
+        ("beyond: bound plus radius rounded down",
+         "arf_add(out, bound.raw(), radius, bits, ARF_RND_CEIL)",
+         "arf_add(out, bound.raw(), radius, bits, ARF_RND_FLOOR)"),
+        ("beyond: radius dropped",
+         "  arf_add(out, bound.raw(), radius, bits, ARF_RND_CEIL);\n",
+         "  (void)bits;\n"
+         "  arf_set(out, bound.raw());\n"),
+        ("beyond: >= for >",
+         "arf_cmp(modulus_squared, reach) > 0",
+         "arf_cmp(modulus_squared, reach) >= 0"),
+        ("within: bound minus radius rounded up",
+         "arf_sub(room, bound.raw(), radius, bits, ARF_RND_FLOOR)",
+         "arf_sub(room, bound.raw(), radius, bits, ARF_RND_CEIL)"),
+        ("within: negative room squared",
+         "  if (arf_sgn(room) < 0) return -1;\n",
+         ""),
+        ("within: square rounded up",
+         "arf_mul(room, room, room, bits, ARF_RND_FLOOR)",
+         "arf_mul(room, room, room, bits, ARF_RND_CEIL)"),
+        ("within: modulus rounded down",
+         "squared_modulus(modulus_squared, z, bits, ARF_RND_CEIL)",
+         "squared_modulus(modulus_squared, z, bits, ARF_RND_FLOOR)"),
+        ("inside: <= for <",
+         "proved_below(z, bound) > 0",
+         "proved_below(z, bound) >= 0"),
+        ("within: < for <=, ties are lost",
+         "proved_below(z, bound) >= 0",
+         "proved_below(z, bound) > 0"),
+        ("lower bound of the modulus: root rounded up",
+         "arf_sqrt(modulus, modulus, 64, ARF_RND_FLOOR)",
+         "arf_sqrt(modulus, modulus, 64, ARF_RND_CEIL)"),
+        ("lower bound of the modulus: difference rounded up",
+         "arf_sub(modulus, modulus, radius, 64, ARF_RND_FLOOR)",
+         "arf_sub(modulus, modulus, radius, 64, ARF_RND_CEIL)"),
+        ("upper bound of the modulus: root rounded down",
+         "arf_sqrt(modulus, modulus, 64, ARF_RND_CEIL)",
+         "arf_sqrt(modulus, modulus, 64, ARF_RND_FLOOR)"),
+        ("bounds of a part: lower end rounded up",
+         "arf_sub(lower, middle, width, bits, ARF_RND_FLOOR)",
+         "arf_sub(lower, middle, width, bits, ARF_RND_CEIL)"),
+    ],
+    "kernel/orbit_enclosure.cpp": [
+        ("remainder: squared term dropped",
+         "  mag_add(remainder_, remainder_, quadratic);\n",
+         ""),
+        ("remainder: R dropped from the squared term",
+         "  mag_add(quadratic, quadratic, remainder_);\n",
+         ""),
+        ("remainder: |Z| R for 2 |Z| R",
+         "  mag_mul_2exp_si(modulus, modulus, 1);\n",
+         ""),
+        ("remainder: |Z| without its radius",
+         "  modulus_upper(modulus, z_);\n",
+         "  midpoint_modulus_upper(modulus, z_);\n"),
+        ("remainder: the next derivative for the present one",
+         "    advance_remainder();\n"
+         "    multiply(d_, z_, d_, bits_);\n",
+         "    multiply(d_, z_, d_, bits_);\n"
+         "    advance_remainder();\n"),
+        ("derivative: + 1 dropped",
+         "    add(d_, d_, one, bits_);\n",
+         ""),
+        ("range: the region's radius dropped",
+         "  mag_addmul(all.radius, slope, spread_);\n",
+         ""),
+        ("range: remainder dropped",
+         "  mag_add(all.radius, all.radius, remainder_);\n",
+         ""),
+        ("range: |D| without its radius",
+         "  modulus_upper(slope, d_);\n",
+         "  midpoint_modulus_upper(slope, d_);\n"),
+        ("segment: a quarter of its length for half",
+         "    modulus_upper(spread, half_length);\n",
+         "    modulus_upper(spread, half_length);\n"
+         "    mag_mul_2exp_si(spread, spread, -1);\n"),
+    ],
+}

@@ -51,8 +51,10 @@ def _value(c, places):
 
 def _narrowed(c, other, bailout, n, places):
     """Halves the way from c to the other until they are neighbours; None if a third index turns up."""
-    middle = other
-    while True:
+    if exact_oracle.escape_index(_value(other, places), bailout, n + 1, SPARE) != n + 1:
+        return None
+    while max(abs(c[0] - other[0]), abs(c[1] - other[1])) > 1:
+        middle = (c[0] + other[0]) // 2, (c[1] + other[1]) // 2
         index = exact_oracle.escape_index(_value(middle, places), bailout, n + 1, SPARE)
         if index == n:
             c = middle
@@ -60,9 +62,7 @@ def _narrowed(c, other, bailout, n, places):
             other = middle
         else:
             return None
-        if max(abs(c[0] - other[0]), abs(c[1] - other[1])) <= 1:
-            return _value(c, places), _value(other, places)
-        middle = (c[0] + other[0]) // 2, (c[1] + other[1]) // 2
+    return _value(c, places), _value(other, places)
 
 
 def disc_that_just_misses(draw):

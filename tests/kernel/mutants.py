@@ -1,7 +1,7 @@
 """Breaks the rules one at a time and demands that the tests notice. Exit code 1 when a mutant survives.
 
 mutants_*.py have the mutants: for each file under src/ what is broken, a text that occurs there exactly once, and its
-replacement. A change after which everything proved is still true does not belong there (to round |mid|^2 up instead of
+replacement (and further such pairs where one check backs up another). A change after which everything proved is still true does not belong there (to round |mid|^2 up instead of
 down in certainly_beyond, for one: the bound that it is compared with has been rounded up before).
 
 The sources and tests are copied to a temporary folder and built there once; for each mutant one file is changed, the
@@ -30,12 +30,18 @@ LONGEST_RUN = 1800  # seconds; the tests of a room take less than one minute
 
 @dataclass
 class Mutant:
-    """One change of one file."""
+    """A change of one file."""
 
     file: str
     what: str
-    before: str
-    after: str
+    changes: list  # of texts and their replacements
+
+    def applied_to(self, text):
+        for before, after in self.changes:
+            if (times := text.count(before)) != 1:
+                raise RuntimeError(f"the text to be replaced occurs {times} times:\n{before}")
+            text = text.replace(before, after)
+        return text
 
     def __str__(self):
         return f"{self.file}: {self.what}"
@@ -43,9 +49,9 @@ class Mutant:
 
 def all_mutants():
     for module in (mutants_discs, mutants_rules, mutants_lanes):
-        for file, changes in module.MUTANTS.items():
-            for change in changes:
-                yield Mutant(file, *change)
+        for file, mutants in module.MUTANTS.items():
+            for what, *texts in mutants:
+                yield Mutant(file, what, list(zip(texts[::2], texts[1::2], strict=True)))
 
 
 class Workshop:
@@ -99,9 +105,7 @@ class Workshop:
         """Where the tests noticed the mutant, or None."""
         path = self.folder / "src" / mutant.file
         text = path.read_text(encoding="utf-8")
-        if (times := text.count(mutant.before)) != 1:
-            raise RuntimeError(f"the text to be replaced occurs {times} times:\n{mutant.before}")
-        path.write_text(text.replace(mutant.before, mutant.after), encoding="utf-8")
+        path.write_text(mutant.applied_to(text), encoding="utf-8")
         try:
             return self.first_failure(ROOMS[ROOMS.index(mutant.file.split("/")[0]):])
         finally:

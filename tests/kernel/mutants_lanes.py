@@ -93,7 +93,9 @@ MUTANTS = {
          ""),
     ],
     "search/double_stage.cpp": [
-        ("double stage: z_{n-1} not compared with the bailout",
+        ("double stage: z_{n-1} not compared, neither with 2 nor with the bailout",
+         "z.modulus > 2 && before.certainly_within(2) && z.certainly_beyond(2)",
+         "z.modulus > 2 && z.certainly_beyond(2)",
          "    if (!before.certainly_within(bailout_)) return",
          "    if (false) return"),
         ("double stage: the short form with errors too large for it",

@@ -50,8 +50,8 @@ Outcome attracting_disc(const Region& region, const AttractingDisc& by) {
                           " of the disc is not shown to lie in the interior of the disc"};
   return Established{{{"period", Dyadic(static_cast<double>(by.period)), Dyadic(static_cast<double>(by.period))},
                       {"radius of the disc", by.disc.radius, by.disc.radius},
-                      {"reach of its image", std::nullopt, modulus_upper_bound(offset)},
-                      {"|multiplier|", std::nullopt, multiplier.upper()}},
+                      {"reach of its image", Dyadic(), modulus_upper_bound(offset)},
+                      {"|multiplier|", Dyadic(), multiplier.upper()}},
                      {"I1", "E2"}};
 }
 

@@ -35,10 +35,11 @@ def a_hair_from_the_bailout(draw, places, least, most):
         n = exact_oracle.escape_index(_value(c, places), bailout, most, SPARE)
         if not n or n < least:
             continue
-        size = 1 << draw.randrange(max(1, places - 24), places)
-        other = c[0] + size * draw.randrange(-9, 10) // 9, c[1] + size * draw.randrange(-9, 10) // 9
-        if pair := _narrowed(c, other, bailout, n, places):
-            return *pair, bailout, n
+        for nearness in range(1, 24):
+            size = 1 << (places - nearness)
+            other = c[0] + size * draw.randrange(-9, 10) // 9, c[1] + size * draw.randrange(-9, 10) // 9
+            if pair := _narrowed(c, other, bailout, n, places):
+                return *pair, bailout, n
 
 
 def _on_grid(c, places):

@@ -145,7 +145,7 @@ class Mutations(unittest.TestCase):
 
     def test_counts_a_hair_from_the_bailout(self):
         sharp, coarse = [], []
-        for number in range(RANDOM_POINTS // 2):
+        for number in range(RANDOM_POINTS // 3):
             places = self.draw.choice([48, 62, 64, 96, 128, 250])
             least, most = ((3, 64), (65, 200))[number % 2]
             c, other, bailout, n = near_misses.a_hair_from_the_bailout(self.draw, places, least, most)

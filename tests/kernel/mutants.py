@@ -1,8 +1,9 @@
 """Breaks the rules one at a time and demands that the tests notice. Exit code 1 when a mutant survives.
 
 mutants_*.py have the mutants: for each file under src/ what is broken, a text that occurs there exactly once, and its
-replacement (and further such pairs where one check backs up another). A change after which everything proved is still true does not belong there (to round |mid|^2 up instead of
-down in certainly_beyond, for one: the bound that it is compared with has been rounded up before).
+replacement (and further such pairs where one check backs up another). A change after which everything proved is still
+true does not belong there (to round |mid|^2 up instead of down in certainly_beyond, for one: the bound that it is
+compared with has been rounded up before).
 
 The sources and tests are copied to a temporary folder and built there once; for each mutant one file is changed, the
 test programs of its room and of those above are built again and run until one fails.

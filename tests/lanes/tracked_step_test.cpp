@@ -114,7 +114,8 @@ TEST_CASE("comparisons of tracked values are proofs") {
     const double error = z.error;
     double bound = source.one_in(2) ? z.modulus - error : z.modulus + error;
     const double towards = source.one_in(2) ? 9 : 0;
-    for (long ulps = source.between(0, source.one_in(2) ? 2 : 80); ulps > 0; --ulps) bound = std::nextafter(bound, towards);
+    for (long ulps = source.between(0, source.one_in(2) ? 2 : 80); ulps > 0; --ulps)
+      bound = std::nextafter(bound, towards);
     if (!(bound > 0x1p-200)) continue;
     const mpq_class size = norm(exact(z.x, z.y)), b = exact(bound), e = exact(error);
     INFO(std::hexfloat << "z = " << z.x << ", " << z.y << " +- " << error << " against " << bound);

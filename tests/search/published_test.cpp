@@ -95,6 +95,24 @@ TEST_CASE("about the period-doubling limit periods double on one side") {
   }
 }
 
+TEST_CASE("just inside the ends of components nothing is claimed that the kernel cannot establish") {
+  // left of -7/4 there is an attracting cycle of period 3, left of -5/4 one of period 4, with multipliers next to 1
+  struct End {
+    Complex at;
+    std::uint64_t period;
+  };
+  for (const End& end : {End{{reference::ratio(-7, 4), 0}, 3}, End{{reference::ratio(-5, 4), 0}, 4}})
+    for (long exponent = -12; exponent >= -120; exponent -= 6) {
+      const Complex c{end.at.re - reference::power_of_two(exponent), 0};
+      const Verdict verdict = decide(c, verdicts::options(20'000, 512));
+      INFO("end " << end.at.re << " less 2^" << exponent);
+      REQUIRE((word(verdict) == "inside" || word(verdict) == "member"));
+      if (word(verdict) == "inside") CHECK(figure(verdict) == end.period);
+      if (exponent >= -24) CHECK(word(verdict) == "inside");
+      require_true(c, verdict);
+    }
+}
+
 TEST_CASE("the real axis is decided everywhere: members from -2 to 1/4") {
   reference::PointSource source(1701);
   for (std::uint64_t k = 0; k < reference::repeats(400); ++k) {

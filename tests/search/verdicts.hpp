@@ -69,8 +69,15 @@ inline std::uint64_t true_index(const Complex& c, const mpq_class& bailout, std:
   return reference::escape_index(c, bailout, limit).value_or(0);
 }
 
+// What was proved over disc enclosures is established at the precision at which it was found.
+inline void confirm_at_its_precision(const Complex& c, const Proof& proof) {
+  const Claim claim{proof.statement, Point{reference::to_rational(c)}, std::nullopt, proof.by};
+  if (bits_of(claim) > 64) REQUIRE(std::holds_alternative<Established>(establish(claim, Limits{})));
+}
+
 /// The statement holds: by MPFR for a count and an attracting cycle, by the exact polynomial or comparison otherwise.
 inline void confirm(const Complex& c, const Proof& proof) {
+  confirm_at_its_precision(c, proof);
   if (const Count* count = std::get_if<Count>(&proof.statement))
     REQUIRE(true_index(c, exact(count->bailout), count->index + 1) == count->index);
   if (const AttractingDisc* by = std::get_if<AttractingDisc>(&proof.by)) confirm_inside(c, *by);

@@ -183,5 +183,8 @@ if __name__ == "__main__":
     except BrokenPipeError:
         os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
         sys.exit(4)
+    except MemoryError:
+        print("recheck.py: there is not enough memory for this certificate", file=sys.stderr)
+        sys.exit(3)
     except KeyboardInterrupt:
         sys.exit(130)

@@ -12,7 +12,8 @@ The step.  Write z_n = Z + h with h = A·v + W·t + e, |e| <= R. Then
 and |2Ze + h²| <= 2|Z|R + (|A| + |W| + R)². So the new Z, A, W are the three brackets, each rounded down to units part
 by part, and the new R is the bound, rounded up, plus the rounding: a part that is rounded down is wrong by less than
 one unit, hence one unit for each part that was not a whole number already (|v|, |t| <= 1, so A and W count as Z does).
-The same holds at the start for c0, r, s and z*. Nothing is charged where nothing is lost: short dyadic orbits are exact.
+The same holds at the start for c0, r, s and z*. Nothing is charged where nothing is lost: short dyadic orbits are
+exact.
 """
 
 from math import isqrt

@@ -1,11 +1,12 @@
 """Which rule establishes which claim, within limits."""
 
+import re
 from math import isqrt
 from typing import NamedTuple
 
 from rechecker import closed_forms
 from rechecker.claims import Point
-from rechecker.exact import Dyadic, read_typed
+from rechecker.exact import LARGEST_EXPONENT, Dyadic, read_typed
 from rechecker.orbit import Orbit
 
 ESTABLISHED, NOT_ESTABLISHED, OVER_LIMIT = "established", "not established", "over the limit"
@@ -42,6 +43,11 @@ def _steps(claim):
             "preperiodic": by.preperiod + by.period}.get(by.rule, 1)
 
 
+def _request_bits(text):
+    exponents = re.findall("[eEpP][+-]?([0-9]+)", text)
+    return 4 * len(text) + sum(4 * (LARGEST_EXPONENT if len(digits) > 6 else int(digits)) for digits in exponents)
+
+
 def _exact_work(claim):
     """What exact arithmetic on the claim's numbers costs: quadratic in their length, because of the gcd."""
     numbers = list(claim.region)
@@ -49,7 +55,7 @@ def _exact_work(claim):
         bits = sum(part.numerator.bit_length() + part.denominator.bit_length() for part in numbers)
     else:
         bits = sum(part.size() for part in numbers)
-    return ((bits + 4 * len(claim.request or "")) // 64) ** 2 // 16
+    return ((bits + _request_bits(claim.request or "")) // 64) ** 2 // 16
 
 
 def _first_places(by):
@@ -80,12 +86,13 @@ def _decimal(units, places, up):
     """The number of units as a decimal of about six figures, rounded up or down."""
     if units == 0:
         return "0"
-    exponent, power = 0, 1 << places
-    while units >= 10 * power:
-        power, exponent = power * 10, exponent + 1
-    while units < power:
-        units, exponent = units * 10, exponent - 1
-    figures = -(-units * 10**6 // power) if up else units * 10**6 // power
+    exponent = (units.bit_length() - 1 - places) * 30103 // 100000  # a first guess by log10(2)
+    above, below = units * 10 ** max(0, -exponent), (1 << places) * 10 ** max(0, exponent)
+    while above >= 10 * below:
+        below, exponent = below * 10, exponent + 1
+    while above < below:
+        above, exponent = above * 10, exponent - 1
+    figures = -(-above * 10**6 // below) if up else above * 10**6 // below
     return f"{figures // 10**6}.{figures % 10**6:06}e{exponent}"
 
 

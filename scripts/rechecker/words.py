@@ -7,14 +7,16 @@ LONGEST_SHOWN = 40  # characters of a number
 
 
 def _shown(value):
-    if value.numerator.bit_length() > 4 * LONGEST_SHOWN or value.denominator.bit_length() > 4 * LONGEST_SHOWN:
-        bits = value.numerator.bit_length() + value.denominator.bit_length()
-        near = _leading_decimal(value)
-        return f"about {near} (an exact number of {bits} bits)"
+    bits = value.numerator.bit_length() + value.denominator.bit_length()
+    if bits > 4 * LONGEST_SHOWN:
+        return f"about {_leading_decimal(value)} (an exact number of {bits} bits)"
     return str(value)
 
 
 def _leading_decimal(value):
+    size = value.numerator.bit_length() - value.denominator.bit_length()
+    if abs(size) > 64:
+        return f"{'-' if value.numerator < 0 else ''}2^{size}"
     places = 20
     scaled = abs(value.numerator) * 10**places // value.denominator
     return f"{'-' if value.numerator < 0 else ''}{scaled // 10**places}.{scaled % 10**places:0{places}}..."

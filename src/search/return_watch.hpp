@@ -24,7 +24,7 @@ class ReturnWatch {
   std::uint64_t approx_period() const { return closest_ < kNear * kNear ? candidate_ : 0; }
 
  private:
-  static constexpr double kNear = 0x1p-4;
+  static constexpr double kNear = 0x1p-6;
   double x_, y_;
   double closest_ = std::numeric_limits<double>::infinity();
   std::uint64_t steps_ = 0, candidate_ = 0;

@@ -83,3 +83,34 @@ def disc_that_just_misses(draw):
 
     reach = fixed - centre
     return claim(reach - (reach >> draw.randrange(20, 250))), claim(reach + (reach >> draw.randrange(16, 21)))
+
+
+def segments_to_second_order(draw):
+    """(false claim, true claim): of counts over real segments right of 1/4, where z_n grows with c and with n.
+
+    The false one ends just beyond the parameter where the index falls: by less than the square of the half length,
+    which is what a first-order model without its remainder overlooks. The true one is short and in the middle.
+    """
+    n, bailout = draw.randrange(3, 12), draw.choice(BAILOUTS)
+    start, end = _where_the_index_falls_below(n + 1, bailout), _where_the_index_falls_below(n, bailout)
+    half = (end - start) * F(draw.randrange(8, 31), 64)
+    beyond = half * half * F(draw.randrange(1, 100), 200)
+    middle, short = (start + end) / 2, (end - start) / 64
+
+    def claim(lo, hi):
+        return {"claim": "count", "bailout": dyadic_text(bailout), "index": n,
+                "region": {"segment": [dyadic_text(lo), dyadic_text(hi)]}, "by": {"rule": "escape", "bits": 128}}
+
+    return claim(end - 2 * half, end + beyond), claim(middle - short, middle + short)
+
+
+def _where_the_index_falls_below(n, bailout):
+    """A parameter c > 1/4 of escape index less than n; less than 2^-80 before it there is one of index n or more."""
+    slow, fast = F(1, 4), F(2) ** 61
+    while fast - slow > F(1, 2**80):
+        middle = (slow + fast) / 2
+        if exact_oracle.escape_index((middle, F(0)), bailout, n - 1, SPARE):
+            fast = middle
+        else:
+            slow = middle
+    return fast

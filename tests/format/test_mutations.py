@@ -32,9 +32,9 @@ if "MERESTONE_CHECK" in os.environ:
     PROGRAMS["merestone-check"] = [os.environ["MERESTONE_CHECK"]]
 THOROUGH = os.environ.get("MERESTONE_THOROUGH") == "1"
 SEED = int(os.environ.get("MERESTONE_SEED", "20240917"))
-MOST_STEPS = 4000 if THOROUGH else 600  # of the oracle
+MOST_STEPS = 1500 if THOROUGH else 600  # of the oracle
 LITTLE_WORK = {"merestone-check": 200_000, "recheck.py": 5_000_000}  # mutants may ask for anything
-MUTANTS, BYTE_MUTANTS, RANDOM_POINTS = (20_000, 20_000, 3000) if THOROUGH else (1200, 1000, 100)
+MUTANTS, BYTE_MUTANTS, RANDOM_POINTS = (10_000, 10_000, 1000) if THOROUGH else (1200, 1000, 100)
 FILES_AT_ONCE = 500
 
 
@@ -158,7 +158,14 @@ class Mutations(unittest.TestCase):
         self.assert_exactly_the_true_ones(*zip(*coarse), is_sharp=False)
 
     def test_discs_that_just_miss_the_fixed_point(self):
-        false, true = zip(*(near_misses.disc_that_just_misses(self.draw) for _ in range(RANDOM_POINTS)))
+        self.assert_only_the_second(near_misses.disc_that_just_misses)
+
+    def test_segments_that_fail_to_second_order(self):
+        self.assert_only_the_second(near_misses.segments_to_second_order)
+
+    def assert_only_the_second(self, pair):
+        """Of many pairs of claims drawn."""
+        false, true = zip(*(pair(self.draw) for _ in range(RANDOM_POINTS)))
         self.assert_exactly_the_true_ones([*false, *true], [False] * len(false) + [True] * len(true))
 
     def test_altered_bytes(self):

@@ -42,7 +42,8 @@ class Consumer(unittest.TestCase):
     def test_cmake_package(self):
         build = self.folder / "build"
         flags = " ".join(sanitizer_flags())
-        run("cmake", "-S", SOURCE / "tests/consumer", "-B", build, f"-DCMAKE_PREFIX_PATH={self.prefix}",
+        run("cmake", "-G", "Ninja", "-S", SOURCE / "tests/consumer", "-B", build,
+            f"-DCMAKE_PREFIX_PATH={self.prefix}",
             f"-DCMAKE_CXX_FLAGS={flags}")
         run("cmake", "--build", build)
         self.check_output(build / "consumer")

@@ -34,7 +34,7 @@ THOROUGH = os.environ.get("MERESTONE_THOROUGH") == "1"
 SEED = int(os.environ.get("MERESTONE_SEED", "20240917"))
 MOST_STEPS = 1500 if THOROUGH else 600  # of the oracle
 LITTLE_WORK = {"merestone-check": 200_000, "recheck.py": 5_000_000}  # mutants may ask for anything
-MUTANTS, BYTE_MUTANTS, RANDOM_POINTS = (10_000, 10_000, 1000) if THOROUGH else (1200, 1000, 100)
+MUTANTS, BYTE_MUTANTS, RANDOM_POINTS = (5_000, 10_000, 1000) if THOROUGH else (1200, 1000, 100)
 FILES_AT_ONCE = 500
 
 

@@ -30,7 +30,7 @@ bool truly_inside(const DiscEnclosure& z, const mpq_class& bound) {
 void check_comparisons(const DiscEnclosure& z, const mpq_class& bound) {
   const Dyadic b = reference::to_dyadic(bound);
   INFO("midpoint " << midpoint(z).re << ", " << midpoint(z).im << " radius " << exact(z.radius) << " bound " << bound);
-  const mpq_class less = bound * (1 - power_of_two(-40)), more = bound * (1 + power_of_two(-40));
+  const mpq_class less = bound * (1 - power_of_two(-40)), more = bound + (bound + exact(z.radius)) * power_of_two(-40);
   if (bound >= 0) {
     if (certainly_beyond(z, b)) REQUIRE(truly_beyond(z, bound));
     if (truly_beyond(z, more)) REQUIRE(certainly_beyond(z, b));

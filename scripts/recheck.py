@@ -15,9 +15,10 @@ import sys
 sys.dont_write_bytecode = True
 
 from rechecker.files import Certificate  # noqa: E402
-from rechecker.rules import ESTABLISHED, NOT_ESTABLISHED, OVER_LIMIT, Limits, establish, work_of  # noqa: E402
+from rechecker.rules import ESTABLISHED, NOT_ESTABLISHED, OVER_LIMIT, establish  # noqa: E402
 from rechecker.strict_json import Fault  # noqa: E402
 from rechecker.words import claim_in_words  # noqa: E402
+from rechecker.work import Limits, work_of  # noqa: E402
 
 FEW = 20  # claims of a file that are printed one by one
 MOST_SHOWN = 100  # failures of a long list that are printed one by one

@@ -4,13 +4,13 @@ A rectangle of parameters is given by integers: x in [x0, x1]/n, y in [y0, y1]/n
 """
 
 from collections import deque
-from fractions import Fraction
 from math import lcm
 from typing import NamedTuple
 
-from rechecker.claims import Disc, Point, Segment
+from rechecker.claims import Disc, Point
+from rechecker.shapes import bounding, shape_of
 
-MOST_CELLS = 4096  # of a disc cut up until the inequality comes out on each
+MOST_CELLS = 4096  # of a region cut up until the inequality comes out on each
 
 
 class Rectangle(NamedTuple):
@@ -29,13 +29,7 @@ class Rectangle(NamedTuple):
 
 
 def bounding_rectangle(region):
-    if isinstance(region, Point):
-        ends = (region.re, region.re, region.im, region.im)
-    elif isinstance(region, Segment):
-        ends = (region.lo.fraction(), region.hi.fraction(), Fraction(0), Fraction(0))
-    else:
-        re, im, r = (part.fraction() for part in region)
-        ends = (re - r, re + r, im - r, im + r)
+    ends = bounding(shape_of(region))
     n = lcm(*(end.denominator for end in ends))
     return Rectangle(*(end.numerator * (n // end.denominator) for end in ends), n)
 
@@ -123,13 +117,3 @@ def is_preperiodic(region, preperiod, period):
         if n == preperiod:
             mark = (x, y)
     return (x, y) == mark
-
-
-def contains(region, re, im):
-    """Is the parameter, given exactly, an element of the region?"""
-    if isinstance(region, Point):
-        return region == (re, im)
-    if isinstance(region, Segment):
-        return im == 0 and region.lo.fraction() <= re <= region.hi.fraction()
-    a, b, r = (part.fraction() for part in region)
-    return (re - a) ** 2 + (im - b) ** 2 <= r * r

@@ -3,7 +3,7 @@
 import hashlib
 import zlib
 
-from rechecker.claims import read_claims
+from rechecker.reading import read_claims
 from rechecker.strict_json import Fault, canonical, check_keys, count_of, fault_at, read_json, shown, text_of
 
 VERSION = 1

@@ -18,8 +18,9 @@ exact.
 
 from math import isqrt
 
-from rechecker.claims import Disc, Point, Segment
+from rechecker.balls import modulus_up, shifted_up
 from rechecker.exact import Dyadic
+from rechecker.shapes import centre_and_radius
 
 FARTHEST = 64  # an orbit beyond 2^64, or with R above |Z| + 1, is given up
 _LONG = 64  # steps from which on a point's orbit is run with less care and more speed
@@ -32,17 +33,7 @@ def _shifted(value, places):
     return whole, int(whole << places != value)
 
 
-def _shifted_up(value, places):
-    return -(-value >> places)
-
-
-def modulus_up(x, y):
-    square = x * x + y * y
-    root = isqrt(square)
-    return root + (root * root != square)
-
-
-def _in_units(value, places):
+def in_units(value, places):
     """The Fraction or Dyadic in units, rounded down, and 1 if it was rounded."""
     if isinstance(value, Dyadic):
         whole = value.floor(places)
@@ -51,33 +42,20 @@ def _in_units(value, places):
     return whole, int(rest != 0)
 
 
-def _centre_and_radius(region):
-    """A disc that contains the region, exactly; for a point the radius is 0."""
-    zero = Dyadic(0, 0)
-    if isinstance(region, Point):
-        return region.re, region.im, zero
-    if isinstance(region, Disc):
-        return region
-    assert isinstance(region, Segment)
-    low = min(region.lo.exponent, region.hi.exponent)
-    lo, hi = (end.mantissa << (end.exponent - low) for end in region)
-    return Dyadic(lo + hi, low - 1), zero, Dyadic(hi - lo, low - 1)
-
-
 class Orbit:
     """The enclosure of z_n over the region, from z_0 = 0 or from a disc of starts."""
 
     def __init__(self, region, places, start=None):
         self.places, self.index = places, 0
-        re, im, radius = _centre_and_radius(region)
+        re, im, radius = centre_and_radius(region)
         self.is_point = radius.mantissa == 0
-        (self._cx, ex), (self._cy, ey) = _in_units(re, places), _in_units(im, places)
-        self._r, er = _in_units(radius, places)
+        (self._cx, ex), (self._cy, ey) = in_units(re, places), in_units(im, places)
+        self._r, er = in_units(radius, places)
         self._parameter_rounding = ex + ey + er
         self.x = self.y = self.ax = self.ay = self.wx = self.wy = self.error = 0
         if start is not None:
-            (self.x, ex), (self.y, ey) = _in_units(start.re, places), _in_units(start.im, places)
-            self.ax, er = _in_units(start.radius, places)
+            (self.x, ex), (self.y, ey) = in_units(start.re, places), in_units(start.im, places)
+            self.ax, er = in_units(start.radius, places)
             self.error = ex + ey + er
 
     def spread(self):
@@ -100,7 +78,7 @@ class Orbit:
         modulus = modulus_up(x, y)
         if self.error > (1 << places) + modulus or modulus > 1 << (places + FARTHEST):
             return False
-        error = _shifted_up(2 * modulus * self.error + spread * spread, places) + self._parameter_rounding
+        error = shifted_up(2 * modulus * self.error + spread * spread, places) + self._parameter_rounding
         if self.ax or self.ay:
             self.ax, self.ay, lost = self._times_twice_z(self.ax, self.ay)
             error += lost
@@ -184,7 +162,7 @@ class Orbit:
 
     def _distance(self, disc):
         """|Z - centre| rounded up, by less than 1, and by how much the centre may be wrong besides."""
-        (x, ex), (y, ey) = _in_units(disc.re, self.places), _in_units(disc.im, self.places)
+        (x, ex), (y, ey) = in_units(disc.re, self.places), in_units(disc.im, self.places)
         return modulus_up(self.x - x, self.y - y), ex + ey
 
     def modulus_bounds(self):

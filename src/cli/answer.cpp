@@ -3,6 +3,9 @@
 #include <fmt/format.h>
 
 #include "cli/enclosure_text.hpp"
+#include "cli/proof_words.hpp"
+#include "cli/region_words.hpp"
+#include "format/names.hpp"
 #include "format/shown.hpp"
 #include "format/spelling.hpp"
 #include "kernel/cycle.hpp"
@@ -16,24 +19,7 @@ constexpr std::size_t kMostCyclePointsInText = 6;
 constexpr std::size_t kLongestShownPoint = 120;
 
 std::string statement_word(const Statement& statement) {
-  return std::visit(Overloaded{[](const Outside&) { return "outside"; }, [](const Count&) { return "outside"; },
-                               [](const Inside&) { return "inside"; }, [](const Member&) { return "member"; }},
-                    statement);
-}
-
-std::string arithmetic_in_words(std::uint32_t bits, const char* lemma) {
-  if (bits == kDoubleBits) return fmt::format("in tracked double precision ({}, E4)", lemma);
-  return fmt::format("over disc enclosures of {} bits ({}, E2)", bits, lemma);
-}
-
-std::string proof_in_words(const Rule& rule) {
-  return std::visit(
-      Overloaded{[](const Escape& by) { return "escape " + arithmetic_in_words(by.bits, "E1"); },
-                 [](const AttractingDisc& by) { return "attracting disc " + arithmetic_in_words(by.bits, "I1"); },
-                 [](const ClosedForm&) { return std::string("polynomial inequality, exact (I3)"); },
-                 [](const RealSegment&) { return std::string("M meets the real axis in [-2, 1/4] (I4)"); },
-                 [](const Preperiodic&) { return std::string("exact arithmetic (P1)"); }},
-      rule);
+  return std::string(std::holds_alternative<Count>(statement) ? "outside" : name_of(statement));
 }
 
 std::string closed_form_reason(const Proof& proof, const ClosedForm& by) {
@@ -83,7 +69,8 @@ std::string reason_in_words(const Proof& proof) {
                  [](const Preperiodic& by) {
                    return fmt::format("a boundary point: z_{} = z_{} and 0 is not in the cycle",
                                       by.preperiod + by.period, by.preperiod);
-                 }},
+                 },
+                 [](const auto&) { return std::string(); }},
       proof.by);
 }
 
@@ -95,6 +82,9 @@ std::string limit_in_words(const Undecided& undecided) {
     case Limit::precision:
       return fmt::format("{} bits do not suffice after {} iterations; raise --bits", undecided.bits,
                          undecided.iterations);
+    case Limit::cells:
+      return fmt::format("cut into {} cells without a verdict; decide smaller regions, or raise --cells",
+                         undecided.cells);
     case Limit::time:
       break;
   }
@@ -105,6 +95,7 @@ std::string limit_in_words(const Undecided& undecided) {
 std::string answer_line(const Answer& answer) {
   const std::string reason = answer.failure() != nullptr     ? answer.failure()->message
                              : answer.undecided() != nullptr ? limit_in_words(*answer.undecided())
+                                                             : answer.region                 ? region_reason_in_words(*answer.proof())
                                                              : reason_in_words(*answer.proof());
   return fmt::format("{}  {}: {}", shortened(answer.asked.text, kLongestShownPoint), verdict_word(answer), reason);
 }
@@ -113,8 +104,10 @@ std::string answer_paragraph(const Answer& answer) {
   std::string text = answer_line(answer) + "\n";
   const Proof* proof = answer.proof();
   if (proof == nullptr) return text;
+  const Rule& by = answer.claim ? answer.claim->by : proof->by;
+  if (answer.region) return text + region_rows(by);
   if (std::holds_alternative<Inside>(proof->statement)) text += cycle_paragraph(answer, *proof);
-  return text + fmt::format("  proved by   {}\n", proof_in_words(answer.claim ? answer.claim->by : proof->by));
+  return text + fmt::format("  proved by   {}\n", proof_in_words(by));
 }
 
 }  // namespace merestone

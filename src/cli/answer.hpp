@@ -8,10 +8,11 @@
 
 namespace merestone {
 
-/// What `merestone decide` has to say about one line.
+/// What `merestone decide` has to say about one line: a parameter, or a box or a disc of parameters.
 struct Answer {
   PointLine asked;
-  ComplexRational c;                          // what was read; zero when the text is malformed
+  ComplexRational c;                          // the parameter that was read, if it is one
+  std::optional<Region> region;               // what the verdict about a box or a disc is about
   std::variant<Failure, Verdict> said;
   std::optional<Claim> claim;                 // what the kernel established anew, where it was asked to
 
@@ -20,7 +21,7 @@ struct Answer {
   const Undecided* undecided() const;
 };
 
-/// "outside", "inside", "member", "undecided" or "error".
+/// "outside", "inside", "member", "straddles", "undecided" or "error".
 std::string verdict_word(const Answer& answer);
 
 /// One line without a newline: the point, the verdict and its reason in a few words.

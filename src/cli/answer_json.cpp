@@ -2,10 +2,12 @@
 
 #include "cli/answer.hpp"
 #include "cli/enclosure_text.hpp"
+#include "cli/proof_words.hpp"
+#include "format/claim_json.hpp"
 #include "format/names.hpp"
 #include "format/spelling.hpp"
 #include "kernel/cycle.hpp"
-#include "kernel/overloaded.hpp"
+#include "kernel/typed_region.hpp"
 
 namespace merestone {
 
@@ -20,24 +22,33 @@ Json complex_json(const DiscEnclosure& z) {
   return {{"re", parts.re}, {"im", parts.im}};
 }
 
+struct AddHints {
+  Json& json;
+
+  void operator()(const Escape& by) const { json["bits"] = by.bits; }
+  void operator()(const AttractingDisc& by) const {
+    json["period"] = by.period;
+    json["bits"] = by.bits;
+  }
+  void operator()(const ClosedForm& by) const { json["period"] = by.period; }
+  void operator()(const RealSegment&) const {}
+  void operator()(const Preperiodic& by) const {
+    json["preperiod"] = by.preperiod;
+    json["period"] = by.period;
+  }
+  void operator()(const ExteriorDisc& by) const { json["bits"] = by.bits; }
+  void operator()(const InteriorDisc& by) const { (*this)(by.cycle); }
+  void operator()(const IsolatedRoot& by) const { json["bits"] = by.bits; }
+  void operator()(const Witnesses& by) const {
+    json["witnesses"] = Json::array();
+    for (const Claim& witness : by.claims) json["witnesses"].push_back(Json::parse(to_json(witness).dump()));
+  }
+  void operator()(const Quarters& by) const { json["pieces"] = pieces_of(by); }
+};
+
 void add_rule(Json& json, const Rule& rule) {
   json["rule"] = name_of(rule);
-  std::visit(Overloaded{[&](const Escape& by) {
-                          json["bits"] = by.bits;
-                        },
-                        [&](const AttractingDisc& by) {
-                          json["period"] = by.period;
-                          json["bits"] = by.bits;
-                        },
-                        [&](const ClosedForm& by) {
-                          json["period"] = by.period;
-                        },
-                        [](const RealSegment&) {},
-                        [&](const Preperiodic& by) {
-                          json["preperiod"] = by.preperiod;
-                          json["period"] = by.period;
-                        }},
-             rule);
+  std::visit(AddHints{json}, rule);
 }
 
 void add_proof(Json& json, const Answer& answer, const Proof& proof) {
@@ -47,7 +58,7 @@ void add_proof(Json& json, const Answer& answer, const Proof& proof) {
   }
   add_rule(json, proof.by);
   if (std::holds_alternative<Member>(proof.statement)) json["why"] = reason_in_words(proof);
-  if (!std::holds_alternative<Inside>(proof.statement)) return;
+  if (answer.region || !std::holds_alternative<Inside>(proof.statement)) return;
   const auto cycle = enclose_cycle(answer.c, proof.by, kMostCyclePoints);
   if (!cycle) return;
   json["multiplier"] = complex_json(cycle->multiplier);
@@ -56,16 +67,17 @@ void add_proof(Json& json, const Answer& answer, const Proof& proof) {
 }
 
 void add_undecided(Json& json, const Undecided& undecided) {
-  static constexpr const char* kLimits[] = {"iterations", "precision", "time"};
+  static constexpr const char* kLimits[] = {"iterations", "precision", "time", "cells"};
   json["limit"] = kLimits[static_cast<std::size_t>(undecided.limit)];
   json["iterations"] = undecided.iterations;
   json["bits"] = undecided.bits;
+  if (undecided.cells > 0) json["cells"] = undecided.cells;
 }
 
 }  // namespace
 
 std::string answer_json(const Answer& answer) {
-  Json json{{"line", answer.asked.line}, {"point", answer.asked.text}};
+  Json json{{"line", answer.asked.line}, {is_typed_region(answer.asked.text) ? "region" : "point", answer.asked.text}};
   if (const Failure* failure = answer.failure()) {
     json["error"] = failure->message;
   } else {

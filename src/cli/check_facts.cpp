@@ -2,32 +2,16 @@
 
 #include <fmt/format.h>
 
-#include <algorithm>
-
-#include "cli/check_words.hpp"
+#include "cli/check_margin.hpp"
+#include "cli/check_number_words.hpp"
+#include "cli/check_region_facts.hpp"
 #include "format/spelling.hpp"
-#include "kernel/overloaded.hpp"
 #include "kernel/primes.hpp"
+#include "kernel/shape.hpp"
 
 namespace merestone {
 
 namespace {
-
-const Figure* figure(const Established& established, const std::string& name) {
-  const auto found = std::find_if(established.figures.begin(), established.figures.end(),
-                                  [&](const Figure& f) { return f.name == name; });
-  return found == established.figures.end() ? nullptr : &*found;
-}
-
-// greater - lesser, rounded down; nothing when an end is missing or nothing is left of the difference.
-std::optional<Dyadic> room(const std::optional<Dyadic>& lesser, const std::optional<Dyadic>& greater) {
-  constexpr slong kBits = 64;
-  if (!lesser || !greater) return std::nullopt;
-  Arf difference;
-  arf_sub(difference, greater->raw(), lesser->raw(), kBits, ARF_RND_FLOOR);
-  if (arf_sgn(difference) <= 0) return std::nullopt;
-  return Dyadic(difference.raw());
-}
 
 /// The facts of one claim, rule by rule.
 class Facts {
@@ -42,20 +26,21 @@ class Facts {
   }
 
   std::vector<Fact> operator()(const AttractingDisc& by) const {
-    const Figure* const reach = figure(established_, "reach of its image");
-    std::vector<Fact> facts = {{fmt::format("|f_c^{}(z) - centre| < radius for every z of the disc{}", by.period,
-                                            is_point_ ? "" : " and c of the region"),
-                                reach != nullptr ? room(reach->upper, by.disc.radius) : std::nullopt}};
-    std::string powers;
-    for (const std::uint64_t k : proper_prime_cofactors(by.period))
-      powers += fmt::format("{}{}", powers.empty() ? "" : ", ", k);
-    if (!powers.empty())
-      facts.push_back(
-          {fmt::format("the disc and its image under f_c^k are disjoint for k = {}: the period is exactly {}", powers,
-                       by.period),
-           {}});
+    return facts_of_cycle(by, is_point_ ? "" : " and c of the region");
+  }
+
+  std::vector<Fact> operator()(const InteriorDisc& by) const {
+    std::vector<Fact> facts = facts_of_cycle(by.cycle, " at c = " + complex_in_words(by.centre));
+    facts.push_back(fact_of_interior_disc(claim_, established_));
     return facts;
   }
+
+  std::vector<Fact> operator()(const ExteriorDisc& by) const {
+    return facts_of_exterior_disc(claim_, established_, by);
+  }
+  std::vector<Fact> operator()(const IsolatedRoot&) const { return facts_of_isolated_root(claim_, established_); }
+  std::vector<Fact> operator()(const Witnesses& by) const { return facts_of_witnesses(by); }
+  std::vector<Fact> operator()(const Quarters& by) const { return facts_of_quarters(by); }
 
   std::vector<Fact> operator()(const ClosedForm& by) const {
     const char* const relation = std::holds_alternative<Inside>(claim_.statement) ? "<" : "<=";
@@ -77,18 +62,34 @@ class Facts {
   }
 
  private:
+  std::vector<Fact> facts_of_cycle(const AttractingDisc& by, const std::string& where) const {
+    const Figure* const reach = figure_of(established_, "reach of its image");
+    std::vector<Fact> facts = {
+        {fmt::format("|f_c^{}(z) - centre| < radius for every z of the disc{}", by.period, where),
+         reach != nullptr ? room(reach->upper, by.disc.radius) : std::nullopt}};
+    std::string powers;
+    for (const std::uint64_t k : proper_prime_cofactors(by.period))
+      powers += fmt::format("{}{}", powers.empty() ? "" : ", ", k);
+    if (!powers.empty())
+      facts.push_back(
+          {fmt::format("the disc and its image under f_c^k are disjoint for k = {}: the period is exactly {}", powers,
+                       by.period),
+           {}});
+    return facts;
+  }
+
   std::string throughout() const { return is_point_ ? "" : " for every c of the region"; }
 
   Fact beyond(std::uint64_t n, const Dyadic& bound) const {
     const std::string modulus = fmt::format("|z_{}|", n);
-    const Figure* const z = figure(established_, modulus);
+    const Figure* const z = figure_of(established_, modulus);
     return {fmt::format("{} > {}{}", modulus, shortened(spell(bound.to_rational())), throughout()),
             z != nullptr ? room(bound, z->lower) : std::nullopt};
   }
 
   Fact within(std::uint64_t n, const Dyadic& bound) const {
     const std::string modulus = fmt::format("|z_{}|", n);
-    const Figure* const z = figure(established_, modulus);
+    const Figure* const z = figure_of(established_, modulus);
     return {fmt::format("{} <= {}{}", modulus, shortened(spell(bound.to_rational())), throughout()),
             z != nullptr ? room(z->upper, bound) : std::nullopt};
   }

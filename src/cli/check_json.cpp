@@ -3,6 +3,8 @@
 #include <nlohmann/json.hpp>
 
 #include "cli/check_facts.hpp"
+#include "cli/check_number_words.hpp"
+#include "cli/check_rule_words.hpp"
 #include "cli/check_words.hpp"
 #include "format/literal.hpp"
 #include "format/names.hpp"
@@ -49,6 +51,7 @@ std::string claim_object(const std::string& path, const CheckedClaim& checked) {
   if (claim.request) object["request"] = shortened(*claim.request);
   object["outcome"] = "established";
   object["rule"] = name_of(claim.by);
+  object["rule_words"] = rule_in_words(claim);
   std::visit(Overloaded{[&](const Established& e) { put_proof(object, claim, e); },
                         [&](const NotEstablished& n) {
                           object["outcome"] = "not established";

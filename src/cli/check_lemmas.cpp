@@ -16,10 +16,16 @@ constexpr std::array kLemmas = {
     Lemma{"B1", "arithmetic of disc enclosures"},
     Lemma{"E1", "radius-2 criterion"},
     Lemma{"E2", "first-order enclosure of the orbit over the region"},
+    Lemma{"E3", "disc outside M, from the conformal map of its complement"},
     Lemma{"I1", "attracting disc: theorems of Schwarz-Pick and Fatou"},
+    Lemma{"I2", "disc in a hyperbolic component, from its multiplier map: theorem of Douady and Hubbard"},
     Lemma{"I3", "polynomial inequalities of the components of periods 1 and 2"},
     Lemma{"I4", "M meets the real axis in [-2, 1/4]"},
+    Lemma{"N1", "exact comparison of regions; a box is its quarters"},
     Lemma{"P1", "preperiodic critical orbit"},
+    Lemma{"P2", "nuclei and Misiurewicz points as isolated roots: theorem of Rouch\u00e9"},
+    Lemma{"P3", "a connected set that meets M and its complement meets the boundary of M"},
+    Lemma{"U1", "disc in the image of a univalent map: theorem of Bieberbach"},
 };
 
 }  // namespace

@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <limits>
 
+#include "format/shown.hpp"
+
 namespace merestone {
 
 namespace {
@@ -13,7 +15,8 @@ constexpr const char* kDescription =
     R"(Establishes anew, with enclosures, every claim that certificates make about the Mandelbrot set M.
 
 A certificate holds claims (this parameter, or every parameter of this region, lies outside M; in the interior of M;
-in M; leaves the disc of this radius at exactly this step) and hints for their proofs. Nothing in it is believed: each
+in M; leaves the disc of this radius at exactly this step; or this region meets the boundary of M, or contains exactly
+one nucleus or Misiurewicz point of this type) and hints for their proofs. Nothing in it is believed: each
 claim is established from its exact numbers by the theorem that its rule names, in arithmetic whose rounding errors are
 bounded. A claim that is not established is reported; that does not say that it is false.
 
@@ -29,6 +32,10 @@ constexpr const char* kFooter = R"(Examples:
       each of many claims in words
   merestone-check --json list.mere | grep '"not established"'
       a JSON object a line; claims that are not established always have theirs
+  merestone-check --statement tex nucleus.mere.json > nucleus.tex
+      each established claim as a paragraph that a paper can \input or quote, with its proof and \bibitem lines
+  merestone-check --statement text list.mere.json
+      the same as plain text; claims that are not established are named on standard error and yield no sentence
   merestone-check --sample 10000 list.mere
       a first look at a large container: all of it is read, 10,000 claims drawn at random are established
   some-program | merestone-check --quiet - && echo "all of it is established"
@@ -41,7 +48,8 @@ Limits:
   others are established.
 
 JSON objects:
-  of a claim  file, claim (its position, from 0), words, request, outcome, rule; proved, figures and lemmas, or reason
+  of a claim  file, claim (its position, from 0), words, request, outcome, rule, rule_words; proved, figures and
+              lemmas, or reason
   of a file   file, claims, sample, established, not_established, over_limit, claims_digest, exit; it stands last
   of a file that could not be read to its end   file, fault (malformed, newer, input), message, exit
 
@@ -55,9 +63,20 @@ Exit codes:
   With several files the first of 4, 2, 1, 3, 5, 0 that occurs.
 )";
 
+StatementForm statement_form(const std::string& word) {
+  if (word == "text") return StatementForm::text;
+  if (word == "tex") return StatementForm::tex;
+  throw CLI::ValidationError("--statement", shown(word) + " is not one of text, tex");
+}
+
 void add_output(CLI::App& program, CheckWords& words) {
   program.add_flag("--json", words.json, "Answer with a JSON object a line");
   program.add_flag("--all", words.all, "Show each claim also of files with more than 20");
+  program
+      .add_option_function<std::string>(
+          "--statement", [&words](const std::string& form) { words.statement = statement_form(form); },
+          "Print the established claims as sentences to quote, theorems cited; tex is for LaTeX")
+      ->type_name("{text,tex}");
   program.add_flag("--quiet", words.quiet, "Print errors only; the exit code is the answer");
 }
 
@@ -107,6 +126,12 @@ std::optional<Failure> problem_of(const CheckWords& words) {
   if (words.quiet && (words.json || words.all))
     return Failure{std::string("--quiet prints no claims and ") + (words.json ? "--json" : "--all") +
                    " does; give one of them"};
+  if (words.statement && (words.json || words.all || words.quiet))
+    return Failure{std::string("--statement prints sentences in place of the report that ") +
+                   (words.json  ? "--json"
+                    : words.all ? "--all"
+                                : "--quiet") +
+                   " shapes; give one of them"};
   return std::nullopt;
 }
 

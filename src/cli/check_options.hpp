@@ -5,6 +5,7 @@
 #include <string>
 #include <vector>
 
+#include "cli/check_notation.hpp"
 #include "kernel/check.hpp"
 #include "kernel/result.hpp"
 
@@ -17,7 +18,8 @@ inline constexpr std::uint64_t kLargestSeed = (std::uint64_t{1} << 53) - 1;
 struct CheckWords {
   std::vector<std::string> files;
   bool json = false, all = false, quiet = false;
-  Limits limits;  // of one claim
+  std::optional<StatementForm> statement;  // sentences to quote instead of a report
+  Limits limits;                           // of one claim
   unsigned threads = 0;
   std::optional<std::uint64_t> sample, seed;
 };

@@ -1,6 +1,7 @@
 #pragma once
 #include <atomic>
 #include <optional>
+#include <set>
 #include <string>
 
 #include "cli/check_options.hpp"
@@ -14,6 +15,7 @@ namespace merestone {
 struct Console {
   Output output;
   bool named_program = false, gave_notation = false;
+  std::set<Source> cited;
 };
 
 /// What is printed about one file, in the form that was asked for.
@@ -39,12 +41,18 @@ class FileReport {
   bool shows(const Batch& batch) const;
   void begin_in_text(bool with_claims);
   void finish_in_text();
+  ExitCode finish_in_sentences();
+  void complain_of_failures(const std::string& name) const;
 
   const CheckWords& words_;
   Console& console_;
   FileSummary summary_;
+  std::vector<Quote> quotes_;  // held back until the certificate is known to be whole
   std::atomic<std::uint64_t> claims_done_ = 0;
   bool begun_ = false;
 };
+
+/// Claims of a file that are put in sentences, at most.
+inline constexpr std::size_t kMostQuotes = 10'000;
 
 }  // namespace merestone

@@ -53,7 +53,9 @@ ExitCode run_check(const CheckWords& words) {
     answer = worse(answer, code);
     ++files[code];
   }
-  if (words.files.size() > 1 && !words.json && !words.quiet) console.output.write(total_line(files));
+  if (words.statement && !console.cited.empty()) console.output.write(bibliography(console.cited, *words.statement));
+  if (words.files.size() > 1 && !words.json && !words.quiet && !words.statement)
+    console.output.write(total_line(files));
   if (!console.output.failed()) return answer;
   complain("standard output cannot be written");
   return ExitCode::io_failed;

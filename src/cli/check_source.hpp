@@ -5,6 +5,7 @@
 #include <variant>
 #include <vector>
 
+#include "cli/check_quote.hpp"
 #include "cli/check_selection.hpp"
 #include "cli/check_tally.hpp"
 #include "format/certificate.hpp"
@@ -25,6 +26,7 @@ struct Batch {
   // What the report makes of it.
   Tally tally;
   std::string text;
+  std::vector<Quote> quotes;
   std::vector<std::string> failures;
 };
 

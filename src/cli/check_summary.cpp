@@ -2,6 +2,11 @@
 
 namespace merestone {
 
+std::uint64_t failures_unlisted(const FileSummary& summary) {
+  const Counts total = summary.tally.total();
+  return total.not_established + total.over_limit - summary.failures.size();
+}
+
 ExitCode exit_code_of(const FileSummary& summary) {
   if (summary.fault) return summary.fault->kind == ReadFault::Kind::input ? ExitCode::io_failed : ExitCode::malformed;
   const Counts total = summary.tally.total();

@@ -29,6 +29,9 @@ struct FileSummary {
 /// Failures that a report for people lists.
 inline constexpr std::size_t kMostFailuresListed = 20;
 
+/// How many more there are.
+std::uint64_t failures_unlisted(const FileSummary& summary);
+
 /// The exit code that the file calls for. Requires that it has an end or a fault.
 ExitCode exit_code_of(const FileSummary& summary);
 

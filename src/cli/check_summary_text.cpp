@@ -11,7 +11,7 @@ namespace merestone {
 namespace {
 
 std::string counts_table(const Tally& tally) {
-  constexpr const char* kRow = "  {:<10} {:<16} {:>16} {:>16} {:>16}\n";
+  constexpr const char* kRow = "  {:<11} {:<16} {:>16} {:>16} {:>16}\n";
   std::string text = fmt::format(kRow, "statement", "rule", "established", "not established", "over the limit");
   for (std::size_t s = 0; s < kStatementKinds; ++s)
     for (std::size_t r = 0; r < kRuleKinds; ++r) {
@@ -28,9 +28,8 @@ std::string counts_table(const Tally& tally) {
 std::string failure_rows(const FileSummary& summary) {
   std::string text;
   for (const std::string& failure : summary.failures) text += "  " + failure + "\n";
-  const Counts total = summary.tally.total();
-  const std::uint64_t more = total.not_established + total.over_limit - summary.failures.size();
-  if (more > 0) text += fmt::format("  ... and {} more; --json lists all\n", grouped(more));
+  if (const std::uint64_t more = failures_unlisted(summary); more > 0)
+    text += fmt::format("  ... and {} more; --json lists all\n", grouped(more));
   return text;
 }
 

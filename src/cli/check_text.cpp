@@ -4,6 +4,8 @@
 
 #include "cli/check_facts.hpp"
 #include "cli/check_lemmas.hpp"
+#include "cli/check_number_words.hpp"
+#include "cli/check_rule_words.hpp"
 #include "cli/check_words.hpp"
 #include "cli/shared_version.hpp"
 #include "format/literal.hpp"
@@ -47,12 +49,10 @@ std::string outcome_word(const Outcome& outcome) {
                     outcome);
 }
 
-// What was established holds for what was typed, too: the kernel has compared the two.
-std::string request_in_words(const CheckedClaim& checked) {
-  const std::string typed = shortened(*checked.claim->request);
-  if (!std::holds_alternative<Established>(checked.outcome)) return typed;
-  return typed +
-         (std::holds_alternative<Point>(checked.claim->region) ? ", exactly this c" : ", which is one of these c");
+// What was established says something of what was typed, too: the kernel has compared the two.
+std::string typed_as(const CheckedClaim& checked) {
+  if (!std::holds_alternative<Established>(checked.outcome)) return shortened(*checked.claim->request);
+  return request_in_words(*checked.claim);
 }
 
 std::string outcome_rows(const CheckedClaim& checked) {
@@ -88,7 +88,7 @@ std::string claim_paragraph(const CheckedClaim& checked) {
   std::string text = fmt::format("Claim {}: {}\n", checked.position, outcome_word(checked.outcome));
   text += row("statement", claim_in_words(claim));
   if (const auto decimals = region_in_decimals(claim.region)) text += row("", *decimals);
-  if (claim.request) text += row("typed as", request_in_words(checked));
+  if (claim.request) text += row("typed as", typed_as(checked));
   text += row("rule", rule_in_words(claim));
   return text + outcome_rows(checked) + "\n";
 }

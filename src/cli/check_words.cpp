@@ -2,39 +2,46 @@
 
 #include <fmt/format.h>
 
+#include "cli/check_number_words.hpp"
+#include "cli/check_request.hpp"
 #include "format/literal.hpp"
-#include "format/names.hpp"
-#include "format/shown.hpp"
 #include "format/spelling.hpp"
 #include "kernel/overloaded.hpp"
+#include "kernel/shape.hpp"
 
 namespace merestone {
 
 namespace {
 
-constexpr std::size_t kLongestShown = 72, kShownHead = 40, kShownTail = 16;
 constexpr std::size_t kLongestReadable = 24;
 constexpr int kDecimals = 17;
 
-std::string number_in_words(const Rational& x) { return shortened(spell(x)); }
-std::string number_in_words(const Dyadic& x) { return x.sign() == 0 ? "0" : shortened(spell(x)); }
-
-// re + im i
-template <class Complex>
-std::string complex_in_words(const Complex& z) {
-  if (z.im.sign() == 0) return number_in_words(z.re);
-  std::string im = number_in_words(z.im);
-  if (z.im.sign() < 0) im.erase(0, 1);
-  const std::string imaginary = im == "1" ? "i" : im + " i";
-  if (z.re.sign() == 0) return (z.im.sign() < 0 ? "-" : "") + imaginary;
-  return number_in_words(z.re) + (z.im.sign() < 0 ? " - " : " + ") + imaginary;
+std::string box_in_words(const Box& box) {
+  return fmt::format("{} <= re c <= {} and {} <= im c <= {}", number_in_words(box.lo.re), number_in_words(box.hi.re),
+                     number_in_words(box.lo.im), number_in_words(box.hi.im));
 }
 
-std::string disc_in_words(char variable, const Disc& disc) {
-  const bool about_zero = disc.centre.re.sign() == 0 && disc.centre.im.sign() == 0;
-  const std::string distance =
-      about_zero ? std::string{variable} : fmt::format("{} - ({})", variable, complex_in_words(disc.centre));
-  return fmt::format("|{}| <= {}", distance, number_in_words(disc.radius));
+// "c = -3/4 + 1/10 i", "every c with |c| <= 0x1p-60", "exactly one real c from 0 to 0x1p-2"
+std::string parameters_in_words(const std::string& quantifier, const Region& region) {
+  return std::visit(Overloaded{[](const Point& point) { return "c = " + complex_in_words(point.at); },
+                               [&](const Segment& segment) {
+                                 return fmt::format("{} real c from {} to {}", quantifier, number_in_words(segment.lo),
+                                                    number_in_words(segment.hi));
+                               },
+                               [&](const Disc& disc) { return quantifier + " c with " + disc_in_words('c', disc); },
+                               [&](const Box& box) { return quantifier + " c with " + box_in_words(box); }},
+                    region);
+}
+
+std::string set_in_words(const Region& region) {
+  return std::visit(Overloaded{[](const Point& point) { return "the point c = " + complex_in_words(point.at); },
+                               [](const Segment& segment) {
+                                 return fmt::format("the segment of the real c from {} to {}",
+                                                    number_in_words(segment.lo), number_in_words(segment.hi));
+                               },
+                               [](const Disc& disc) { return "the disc " + disc_in_words('c', disc); },
+                               [](const Box& box) { return "the box " + box_in_words(box); }},
+                    region);
 }
 
 Dyadic rounded(const Rational& x, arf_rnd_t direction) {
@@ -54,59 +61,36 @@ bool is_readable(const Region& region) {
          spell(point->at.im).size() <= kLongestReadable;
 }
 
-std::string hints_in_words(const Rule& rule) {
-  return std::visit(
-      Overloaded{[](const Escape& by) {
-                   const std::string at = by.index == 0 ? "" : fmt::format("at index {}, ", by.index);
-                   return fmt::format("{}enclosures of {} bits", at, by.bits);
-                 },
-                 [](const AttractingDisc& by) {
-                   return fmt::format("period {}, the disc {}, enclosures of {} bits", by.period,
-                                      disc_in_words('z', by.disc), by.bits);
-                 },
-                 [](const ClosedForm& by) {
-                   return std::string(by.period == 1 ? "the main cardioid (period 1)" : "the disc of period 2");
-                 },
-                 [](const RealSegment&) { return std::string(); },
-                 [](const Preperiodic& by) { return fmt::format("preperiod {}, period {}", by.preperiod, by.period); }},
-      rule);
-}
+/// The statement about the region, kind by kind.
+struct StatementWords {
+  const Region& region;
+
+  std::string operator()(const Outside&) const { return every() + " lies outside M"; }
+  std::string operator()(const Inside&) const { return every() + " lies in the interior of M"; }
+  std::string operator()(const Member&) const { return every() + " lies in M"; }
+  std::string operator()(const Count& count) const {
+    return fmt::format("for {} the first n >= 1 with |z_n| > {} is n = {}, so c lies outside M", every(),
+                       number_in_words(count.bailout.to_rational()), count.index);
+  }
+  std::string operator()(const Straddles&) const { return set_in_words(region) + " meets the boundary of M"; }
+  std::string operator()(const Nucleus& type) const {
+    return fmt::format("{} is a nucleus of period {}: 0 has exactly this period", one(), type.period);
+  }
+  std::string operator()(const Misiurewicz& type) const {
+    return fmt::format(
+        "{} is a Misiurewicz point of preperiod {} and period {}: z_{} is the first point of the critical "
+        "orbit on a cycle, whose period is exactly {}",
+        one(), type.preperiod, type.period, type.preperiod, type.period);
+  }
+
+ private:
+  std::string every() const { return parameters_in_words("every", region); }
+  std::string one() const { return parameters_in_words("exactly one", region); }
+};
 
 }  // namespace
 
-std::string shortened(std::string_view text) {
-  if (text.size() <= kLongestShown) return std::string(text);
-  return fmt::format("{}...({} characters left out)...{}", text.substr(0, kShownHead),
-                     grouped(text.size() - kShownHead - kShownTail), text.substr(text.size() - kShownTail));
-}
-
-std::string region_in_words(const Region& region) {
-  return std::visit(Overloaded{[](const Point& point) { return "c = " + complex_in_words(point.at); },
-                               [](const Segment& segment) {
-                                 return fmt::format("every real c from {} to {}", number_in_words(segment.lo),
-                                                    number_in_words(segment.hi));
-                               },
-                               [](const Disc& disc) { return "every c with " + disc_in_words('c', disc); }},
-                    region);
-}
-
-std::string claim_in_words(const Claim& claim) {
-  const std::string region = region_in_words(claim.region);
-  return std::visit(Overloaded{[&](const Outside&) { return region + " lies outside M"; },
-                               [&](const Inside&) { return region + " lies in the interior of M"; },
-                               [&](const Member&) { return region + " lies in M"; },
-                               [&](const Count& count) {
-                                 return fmt::format(
-                                     "for {} the first n >= 1 with |z_n| > {} is n = {}, so c lies outside M", region,
-                                     number_in_words(count.bailout.to_rational()), count.index);
-                               }},
-                    claim.statement);
-}
-
-std::string rule_in_words(const Claim& claim) {
-  const std::string hints = hints_in_words(claim.by);
-  return std::string(name_of(claim.by)) + (hints.empty() ? "" : ": " + hints);
-}
+std::string claim_in_words(const Claim& claim) { return std::visit(StatementWords{claim.region}, claim.statement); }
 
 std::optional<std::string> region_in_decimals(const Region& region) {
   if (is_readable(region)) return std::nullopt;
@@ -114,6 +98,25 @@ std::optional<std::string> region_in_decimals(const Region& region) {
   const std::string re = "re c in " + side_in_decimals(r.x_lo, r.x_hi);
   if (r.y_lo.sign() == 0 && r.y_hi.sign() == 0) return re;
   return re + ", im c in " + side_in_decimals(r.y_lo, r.y_hi);
+}
+
+std::string request_in_words(const Claim& claim) {
+  const std::string typed = shortened(*claim.request);
+  switch (relation_of_request(claim)) {
+    case RequestRelation::same_point:
+      return typed + ", exactly this c";
+    case RequestRelation::same_region:
+      return typed + ", exactly this region";
+    case RequestRelation::point_in_region:
+      return typed + ", which is one of these c";
+    case RequestRelation::part_of_region:
+      return typed + ", which lies in this region: the claim holds for every c of it";
+    case RequestRelation::around_region:
+      break;
+  }
+  return typed + ", which contains this region: it " +
+         (std::holds_alternative<Straddles>(claim.statement) ? "meets the boundary of M, too"
+                                                             : "contains at least one such c");
 }
 
 }  // namespace merestone

@@ -11,9 +11,13 @@ constexpr const char* kFooter = R"(Examples:
   merestone decide -0.75+0.1i
       one parameter; also 1/4, -17/20+1/5i, 0x3p-2 or -0.75,0.1
   merestone decide --points list.txt --out list.mere.json
-      a parameter a line, '#' begins a comment; writes a certificate for a colleague
+      a line each: a parameter, box A B or disc C R; '#' begins a comment; writes a certificate
   merestone-check list.mere.json
       what the colleague runs: it establishes every claim anew
+  merestone decide --box -0.76+0.09i -0.74+0.11i
+      every parameter of a box; it straddles if it has a proved member and a proved outsider
+  merestone decide --disc 0.26 0.005 --rules elementary
+      a disc, by its centre and radius, with nothing but arithmetic and attracting cycles
   merestone decide --expect outside 0.2501 && echo "it is outside"
       for scripts: the exit code is the answer
   some-program | merestone decide --points - --json
@@ -23,6 +27,7 @@ Verdicts:
   outside     not in M; with the proved escape index
   inside      in the interior of M; with the period of the attracting cycle
   member      in M; why, and whether it is known to lie on the boundary
+  straddles   the region contains boundary points of M; with the witnesses that prove it
   undecided   nothing was proved; which limit ended the attempt
 
 Exit codes:
@@ -36,7 +41,13 @@ Exit codes:
 void add_input(CLI::App& command, DecideWords& words) {
   command.add_option("point", words.points, "Parameters: decimals, fractions or dyadics of any length, as a+bi or a,b")
       ->type_name("POINT");
-  command.add_option("--points", words.list, "File with one parameter a line, or - for standard input")
+  command.add_option("--box", words.boxes, "The box between two opposite corners; may be given again")
+      ->type_name("A B");
+  command.add_option("--disc", words.discs, "The disc about a centre, and its radius; may be given again")
+      ->type_name("C R");
+  command
+      .add_option("--points,--regions", words.list,
+                  "File with a parameter, box A B or disc C R on each line, or - for standard input")
       ->type_name("FILE");
 }
 
@@ -52,15 +63,28 @@ void add_limits(CLI::App& command, DecideWords& words) {
       ->type_name("N")
       ->check(CLI::Range(53, 1'048'576))
       ->capture_default_str();
-  command.add_option("--time-limit", words.limits.seconds, "Most seconds for one parameter")
+  command.add_option("--time-limit", words.limits.seconds, "Most seconds for one parameter or region")
       ->type_name("SECONDS")
       ->check(CLI::Range(1e-3, 1e7))
       ->capture_default_str();
 }
 
+void add_rules(CLI::App& command, DecideWords& words) {
+  command.add_option("--cells", words.limits.cells, "Most cells into which a region is cut")
+      ->type_name("N")
+      ->check(CLI::Range(std::uint64_t{1}, std::uint64_t{1'000'000}))
+      ->capture_default_str();
+  command
+      .add_option("--rules", words.rules,
+                  "elementary: for regions only rules that rest on arithmetic and attracting cycles, not on the theory of "
+                  "univalent functions")
+      ->check(CLI::IsMember({"all", "elementary"}))
+      ->capture_default_str();
+}
+
 void add_output(CLI::App& command, DecideWords& words) {
-  command.add_option("--expect", words.expect, "Exit with 1 where a point is proved to be other than this")
-      ->check(CLI::IsMember({"outside", "inside", "member"}));
+  command.add_option("--expect", words.expect, "Exit with 1 where a parameter or region is proved to be other than this")
+      ->check(CLI::IsMember({"outside", "inside", "member", "straddles"}));
   command.add_option("--out", words.out,
                      "Write a certificate: NAME.mere.json (up to 10,000 claims) or NAME.mere (any number)")
       ->type_name("FILE");
@@ -88,18 +112,20 @@ Result<Dyadic> read_bailout(const std::string& text) {
 
 CLI::App* add_decide_command(CLI::App& program, DecideWords& words) {
   CLI::App* command = program.add_subcommand(
-      "decide", "Prove for each parameter c that it lies outside the Mandelbrot set M, inside, or is a member");
+      "decide", "Prove of parameters and regions that they lie outside the Mandelbrot set M, inside, are members, or straddle its boundary");
   add_input(*command, words);
   add_limits(*command, words);
+  add_rules(*command, words);
   add_output(*command, words);
   command->footer(kFooter);
   return command;
 }
 
 Result<DecideRequest> read_decide_words(const DecideWords& words) {
-  if (words.points.empty() == words.list.empty())
-    return Failure{words.list.empty() ? "decide: no parameter was given; write one, such as -0.75+0.1i, or --points FILE"
-                                      : "decide: give parameters or --points, not both"};
+  const bool has_typed = !words.points.empty() || !words.boxes.empty() || !words.discs.empty();
+  if (has_typed != words.list.empty())
+    return Failure{words.list.empty() ? "decide: no parameter was given; write one, such as -0.75+0.1i, a --box, a --disc or --points FILE"
+                                      : "decide: give parameters and regions, or --points, not both"};
   if (!words.out.empty())
     if (auto problem = check_certificate_name(words.out)) return *problem;
   const Result<Dyadic> bailout = read_bailout(words.bailout);
@@ -108,6 +134,8 @@ Result<DecideRequest> read_decide_words(const DecideWords& words) {
   if (words.expect == "outside") request.expect = Expectation::outside;
   if (words.expect == "inside") request.expect = Expectation::inside;
   if (words.expect == "member") request.expect = Expectation::member;
+  if (words.expect == "straddles") request.expect = Expectation::straddles;
+  if (words.rules == "elementary") request.options.rules = Rules::elementary;
   return request;
 }
 

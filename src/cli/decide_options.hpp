@@ -10,15 +10,17 @@
 
 namespace merestone {
 
-/// What --expect asks of every point.
-enum class Expectation { outside, inside, member };
+/// What --expect asks of every parameter or region.
+enum class Expectation { outside, inside, member, straddles };
 
 /// The words of `merestone decide`, as typed.
 struct DecideWords {
   std::vector<std::string> points;
+  std::vector<std::pair<std::string, std::string>> boxes, discs;  // two corners; centre and radius
   std::string list;
   std::string bailout = "2";
   SearchLimits limits;
+  std::string rules = "all";
   std::string expect;
   std::string out;
   bool json = false, quiet = false;

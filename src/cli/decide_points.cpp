@@ -9,13 +9,22 @@ namespace {
 // Small enough that a few hard parameters do not hold up many easy ones behind them.
 constexpr std::size_t kBatch = 64;
 
+// A number as it may stand in a line that has several: without blanks.
+std::string packed(const std::string& word) {
+  std::string text = plain_text(word);
+  std::erase_if(text, [](char c) { return c == ' ' || c == '\t'; });
+  return text;
+}
+
 }  // namespace
 
-Result<DecidePoints> DecidePoints::open(const std::vector<std::string>& typed, const std::string& list) {
+Result<DecidePoints> DecidePoints::open(const DecideWords& words) {
   DecidePoints points;
-  for (const std::string& text : typed) points.typed_.push_back({points.typed_.size() + 1, plain_text(text)});
-  if (list.empty()) return points;
-  Result<PointsInput> input = PointsInput::open(list);
+  for (const std::string& text : words.points) points.add(plain_text(text));
+  for (const auto& [a, b] : words.boxes) points.add("box " + packed(a) + " " + packed(b));
+  for (const auto& [centre, radius] : words.discs) points.add("disc " + packed(centre) + " " + packed(radius));
+  if (words.list.empty()) return points;
+  Result<PointsInput> input = PointsInput::open(words.list);
   if (!input) return input.failure();
   points.list_.emplace(std::move(input.value()));
   return points;

@@ -5,10 +5,10 @@
 #include <tbb/parallel_pipeline.h>
 
 #include <atomic>
-#include <limits>
 #include <mutex>
 #include <nlohmann/json.hpp>
 
+#include "cli/decide_answer.hpp"
 #include "cli/decide_certificate.hpp"
 #include "cli/decide_points.hpp"
 #include "cli/decide_tally.hpp"
@@ -19,10 +19,6 @@
 #include "cli/shared_progress.hpp"
 #include "cli/shared_threads.hpp"
 #include "format/claim_json.hpp"
-#include "format/shown.hpp"
-#include "kernel/typed_number.hpp"
-#include "search/certify.hpp"
-#include "search/decide_point.hpp"
 
 namespace merestone {
 
@@ -48,8 +44,6 @@ class DecideRun {
  private:
   std::optional<std::vector<PointLine>> next_batch();
   Reply reply(const std::vector<PointLine>& batch);
-  Answer answer(const PointLine& asked) const;
-  void certify_or_withdraw(Answer& answer, const Proof& proof) const;
   /// Is each verdict established anew by the kernel? For a certificate, and for few parameters; a long list would take
   /// several times as long.
   bool certifies() const { return file_ || !points_.is_list(); }
@@ -85,33 +79,6 @@ std::optional<std::vector<PointLine>> DecideRun::next_batch() {
   return std::move(batch.value());
 }
 
-// What is claimed is established by the kernel here and now, whatever the colleague's limits will be.
-Limits limits_of_certificate(const SearchLimits& search) {
-  Limits limits;
-  limits.work = std::numeric_limits<std::uint64_t>::max();
-  limits.bits = std::max(limits.bits, search.bits);
-  return limits;
-}
-
-Answer DecideRun::answer(const PointLine& asked) const {
-  const Result<ComplexRational> c = parse_complex(asked.text);
-  if (!c) return {asked, {}, c.failure(), std::nullopt};
-  Answer answer{asked, *c, decide_point(*c, request_.options), std::nullopt};
-  if (const Proof* proof = certifies() ? answer.proof() : nullptr)
-    certify_or_withdraw(answer, *proof);
-  return answer;
-}
-
-// A verdict that the kernel does not establish anew is withdrawn.
-void DecideRun::certify_or_withdraw(Answer& answer, const Proof& proof) const {
-  const Limits limits = limits_of_certificate(request_.options.limits);
-  answer.claim = certify(answer.c, answer.asked.text, proof, limits);
-  if (answer.claim) return;
-  fmt::print(stderr, "merestone: {}: search and kernel disagree, which is a defect of the program; please report this parameter\n",
-             shown(answer.asked.text));
-  answer.said = Verdict(Undecided{Limit::precision, 0, limits.bits});
-}
-
 void DecideRun::render(const Answer& answer, Reply& reply) const {
   if (words_.json)
     reply.out += answer_json(answer) + "\n";
@@ -127,7 +94,7 @@ Reply DecideRun::reply(const std::vector<PointLine>& batch) {
   Reply reply;
   for (const PointLine& asked : batch) {
     if (stopped_) break;
-    const Answer answer = this->answer(asked);
+    const Answer answer = answer_to(asked, request_.options, certifies());
     tally_.take(answer);
     reply.code = worse(reply.code, exit_code_of(answer, request_.expect));
     render(answer, reply);
@@ -219,7 +186,7 @@ int refuse(ExitCode code, const Failure& failure) {
 int run_decide(const DecideWords& words, const std::string& command_line) {
   Result<DecideRequest> request = read_decide_words(words);
   if (!request) return refuse(ExitCode::malformed, request.failure());
-  Result<DecidePoints> points = DecidePoints::open(words.points, words.list);
+  Result<DecidePoints> points = DecidePoints::open(words);
   if (!points) return refuse(ExitCode::io_failed, points.failure());
   std::optional<CertificateFile> file;
   if (!words.out.empty()) {

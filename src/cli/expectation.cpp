@@ -13,16 +13,21 @@ ExitCode against(const Proof& proof, Expectation expected) {
   const bool outside =
       std::holds_alternative<Outside>(proof.statement) || std::holds_alternative<Count>(proof.statement);
   const bool inside = std::holds_alternative<Inside>(proof.statement);
+  // A region that straddles has parameters outside M and members, also boundary points, which are not inside.
+  const bool straddles = std::holds_alternative<Straddles>(proof.statement);
   switch (expected) {
     case Expectation::outside:
       return outside ? ExitCode::established : ExitCode::refuted;
     case Expectation::member:
-      return outside ? ExitCode::refuted : ExitCode::established;
+      return outside || straddles ? ExitCode::refuted : ExitCode::established;
+    case Expectation::straddles:
+      if (straddles || known_boundary_point(proof)) return ExitCode::established;
+      return outside || inside ? ExitCode::refuted : ExitCode::undecided;
     case Expectation::inside:
       break;
   }
   if (inside) return ExitCode::established;
-  return outside || known_boundary_point(proof) ? ExitCode::refuted : ExitCode::undecided;
+  return outside || straddles || known_boundary_point(proof) ? ExitCode::refuted : ExitCode::undecided;
 }
 
 }  // namespace

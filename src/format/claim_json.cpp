@@ -9,6 +9,7 @@
 #include "format/shown.hpp"
 #include "format/spelling.hpp"
 #include "format/strict_object.hpp"
+#include "kernel/overloaded.hpp"
 
 namespace merestone {
 
@@ -20,13 +21,20 @@ Result<StatementKind> read_kind(const json& value, const Place& at) {
   const Result<std::string> name = read_text(value, at, "claim");
   if (!name) return name.failure();
   if (const auto kind = statement_kind(*name)) return *kind;
-  return Place(at, "claim").fault("unknown claim " + shown(*name) + "; the claims are outside, inside, member, count");
+  return Place(at, "claim").fault("unknown claim " + shown(*name) + "; the claims are " + all_statement_names());
 }
 
 std::optional<Failure> check_claim_keys(const json& value, const Place& at, StatementKind kind) {
-  if (kind == StatementKind::count)
-    return check_keys(value, at, {"claim", "region", "by", "bailout", "index"}, {"request"});
-  return check_keys(value, at, {"claim", "region", "by"}, {"request"});
+  switch (kind) {
+    case StatementKind::count:
+      return check_keys(value, at, {"claim", "region", "by", "bailout", "index"}, {"request"});
+    case StatementKind::nucleus:
+      return check_keys(value, at, {"claim", "region", "by", "period"}, {"request"});
+    case StatementKind::misiurewicz:
+      return check_keys(value, at, {"claim", "region", "by", "preperiod", "period"}, {"request"});
+    default:
+      return check_keys(value, at, {"claim", "region", "by"}, {"request"});
+  }
 }
 
 Result<Statement> read_count_statement(const json& value, const Place& at) {
@@ -39,6 +47,20 @@ Result<Statement> read_count_statement(const json& value, const Place& at) {
   return Statement(Count{std::move(bailout.value()), *index});
 }
 
+Result<Statement> read_nucleus(const json& value, const Place& at) {
+  const Result<std::uint64_t> period = read_count(value, at, "period", 1);
+  if (!period) return period.failure();
+  return Statement(Nucleus{*period});
+}
+
+Result<Statement> read_misiurewicz(const json& value, const Place& at) {
+  const Result<std::uint64_t> preperiod = read_count(value, at, "preperiod", 2);
+  if (!preperiod) return preperiod.failure();
+  const Result<std::uint64_t> period = read_count(value, at, "period", 1);
+  if (!period) return period.failure();
+  return Statement(Misiurewicz{*preperiod, *period});
+}
+
 Result<Statement> read_statement(const json& value, const Place& at, StatementKind kind) {
   switch (kind) {
     case StatementKind::outside:
@@ -47,6 +69,12 @@ Result<Statement> read_statement(const json& value, const Place& at, StatementKi
       return Statement(Inside{});
     case StatementKind::member:
       return Statement(Member{});
+    case StatementKind::straddles:
+      return Statement(Straddles{});
+    case StatementKind::nucleus:
+      return read_nucleus(value, at);
+    case StatementKind::misiurewicz:
+      return read_misiurewicz(value, at);
     case StatementKind::count:
       break;
   }
@@ -65,11 +93,20 @@ Result<std::optional<std::string>> read_request(const json& value, const Place& 
 }  // namespace
 
 json to_json(const Claim& claim) {
-  json out = {{"claim", name_of(claim.statement)}, {"region", to_json(claim.region)}, {"by", rule_to_json(claim)}};
-  if (const Count* count = std::get_if<Count>(&claim.statement)) {
-    out["bailout"] = spell(count->bailout);
-    out["index"] = count->index;
-  }
+  json out = {{"claim", name_of(claim.statement)},
+              {"region", to_json(claim.region)},
+              {"by", rule_to_json(claim.by, kind_of(claim.statement))}};
+  std::visit(Overloaded{[&](const Count& count) {
+                          out["bailout"] = spell(count.bailout);
+                          out["index"] = count.index;
+                        },
+                        [&](const Nucleus& type) { out["period"] = type.period; },
+                        [&](const Misiurewicz& type) {
+                          out["preperiod"] = type.preperiod;
+                          out["period"] = type.period;
+                        },
+                        [](const auto&) {}},
+             claim.statement);
   if (claim.request) out["request"] = *claim.request;
   return out;
 }

@@ -4,9 +4,11 @@
 #include <string>
 #include <variant>
 
+#include "format/claim_json.hpp"
 #include "format/region_json.hpp"
 #include "format/shown.hpp"
 #include "format/strict_object.hpp"
+#include "kernel/work.hpp"
 
 namespace merestone {
 
@@ -16,15 +18,16 @@ using nlohmann::json;
 
 constexpr std::uint64_t kLeastBits = 2;
 constexpr std::uint64_t kMostBits = std::numeric_limits<std::uint32_t>::max();
+constexpr std::size_t kMostWitnesses = 2;
 constexpr std::uint64_t kLongestPreperiodic = 1'000'000;  // preperiod and period each
 
 struct HintsToJson {
   json& out;
-  bool is_count;
+  StatementKind statement;
 
   void operator()(const Escape& by) const {
     // A count has its index in the statement; one that stood here too would be written, and refused by every reader.
-    if (!is_count || by.index != 0) out["index"] = by.index;
+    if (statement != StatementKind::count || by.index != 0) out["index"] = by.index;
     out["bits"] = by.bits;
   }
   void operator()(const AttractingDisc& by) const {
@@ -38,6 +41,24 @@ struct HintsToJson {
     out["preperiod"] = by.preperiod;
     out["period"] = by.period;
   }
+  void operator()(const ExteriorDisc& by) const {
+    out["centre"] = to_json(by.centre);
+    out["index"] = by.index;
+    out["bits"] = by.bits;
+  }
+  void operator()(const InteriorDisc& by) const {
+    out["centre"] = to_json(by.centre);
+    (*this)(by.cycle);
+  }
+  void operator()(const IsolatedRoot& by) const { out["bits"] = by.bits; }
+  void operator()(const Witnesses& by) const {
+    out["witnesses"] = json::array();
+    for (const Claim& claim : by.claims) out["witnesses"].push_back(to_json(claim));
+  }
+  void operator()(const Quarters& by) const {
+    out["quarters"] = json::array();
+    for (const Rule& rule : by.rules) out["quarters"].push_back(rule_to_json(rule, statement));
+  }
 };
 
 Result<std::uint32_t> read_small(const json& value, const Place& at, std::string_view key, std::uint64_t least,
@@ -45,6 +66,10 @@ Result<std::uint32_t> read_small(const json& value, const Place& at, std::string
   const Result<std::uint64_t> count = read_count(value, at, key, least, most);
   if (!count) return count.failure();
   return static_cast<std::uint32_t>(*count);
+}
+
+Result<std::uint32_t> read_bits(const json& value, const Place& at) {
+  return read_small(value, at, "bits", kLeastBits, kMostBits);
 }
 
 Result<Rule> read_escape(const json& value, const Place& at, bool is_count) {
@@ -56,21 +81,86 @@ Result<Rule> read_escape(const json& value, const Place& at, bool is_count) {
     if (!index) return index.failure();
     by.index = *index;
   }
-  const Result<std::uint32_t> bits = read_small(value, at, "bits", kLeastBits, kMostBits);
+  const Result<std::uint32_t> bits = read_bits(value, at);
   if (!bits) return bits.failure();
   by.bits = *bits;
   return Rule(by);
 }
 
-Result<Rule> read_attracting_disc(const json& value, const Place& at) {
-  if (auto problem = check_keys(value, at, {"rule", "period", "disc", "bits"})) return *problem;
+// The hints of a cycle, in an object whose keys have been checked.
+Result<AttractingDisc> read_cycle(const json& value, const Place& at) {
   const Result<std::uint64_t> period = read_count(value, at, "period", 1);
   if (!period) return period.failure();
   Result<Disc> disc = read_disc(value["disc"], Place(at, "disc"));
   if (!disc) return disc.failure();
-  const Result<std::uint32_t> bits = read_small(value, at, "bits", kLeastBits, kMostBits);
+  const Result<std::uint32_t> bits = read_bits(value, at);
   if (!bits) return bits.failure();
-  return Rule(AttractingDisc{*period, std::move(disc.value()), *bits});
+  return AttractingDisc{*period, std::move(disc.value()), *bits};
+}
+
+Result<Rule> read_attracting_disc(const json& value, const Place& at) {
+  if (auto problem = check_keys(value, at, {"rule", "period", "disc", "bits"})) return *problem;
+  Result<AttractingDisc> cycle = read_cycle(value, at);
+  if (!cycle) return cycle.failure();
+  return Rule(std::move(cycle.value()));
+}
+
+Result<Rule> read_interior_disc(const json& value, const Place& at) {
+  if (auto problem = check_keys(value, at, {"rule", "centre", "period", "disc", "bits"})) return *problem;
+  Result<ComplexDyadic> centre = read_centre(value, at);
+  if (!centre) return centre.failure();
+  Result<AttractingDisc> cycle = read_cycle(value, at);
+  if (!cycle) return cycle.failure();
+  return Rule(InteriorDisc{std::move(centre.value()), std::move(cycle.value())});
+}
+
+Result<Rule> read_exterior_disc(const json& value, const Place& at) {
+  if (auto problem = check_keys(value, at, {"rule", "centre", "index", "bits"})) return *problem;
+  Result<ComplexDyadic> centre = read_centre(value, at);
+  if (!centre) return centre.failure();
+  const Result<std::uint64_t> index = read_count(value, at, "index", 1);
+  if (!index) return index.failure();
+  const Result<std::uint32_t> bits = read_bits(value, at);
+  if (!bits) return bits.failure();
+  return Rule(ExteriorDisc{std::move(centre.value()), *index, *bits});
+}
+
+Result<Rule> read_isolated_root(const json& value, const Place& at) {
+  if (auto problem = check_keys(value, at, {"rule", "bits"})) return *problem;
+  const Result<std::uint32_t> bits = read_bits(value, at);
+  if (!bits) return bits.failure();
+  return Rule(IsolatedRoot{*bits});
+}
+
+Result<Rule> read_witnesses(const json& value, const Place& at) {
+  if (auto problem = check_keys(value, at, {"rule", "witnesses"})) return *problem;
+  const Place inner(at, "witnesses");
+  Result<std::vector<Claim>> claims = read_claims(value["witnesses"], inner, kMostWitnesses);
+  if (!claims) return claims.failure();
+  for (std::size_t i = 0; i < claims->size(); ++i) {
+    const Claim& claim = (*claims)[i];
+    if (claim.request) return Place(inner, i).fault("a witness has no request");
+    if (std::holds_alternative<Straddles>(claim.statement)) return Place(inner, i).fault("a witness does not straddle");
+  }
+  return Rule(Witnesses{std::move(claims.value())});
+}
+
+Result<Rule> read_nested_rule(const json& value, const Place& at, StatementKind statement, int depth);
+
+Result<Rule> read_quarters(const json& value, const Place& at, StatementKind statement, int depth) {
+  if (auto problem = check_keys(value, at, {"rule", "quarters"})) return *problem;
+  const Place inner(at, "quarters");
+  const json& rules = value["quarters"];
+  if (depth == kDeepestRule)
+    return inner.fault("quarters are nested at most " + std::to_string(kDeepestRule) + " deep");
+  if (!rules.is_array() || rules.size() != 4) return inner.fault("an array of 4 rules should stand here");
+  Quarters quarters;
+  for (std::size_t i = 0; i < rules.size(); ++i) {
+    Result<Rule> rule = read_nested_rule(rules[i], Place(inner, i), statement, depth + 1);
+    if (!rule) return rule.failure();
+    quarters.rules.push_back(std::move(rule.value()));
+  }
+  return Rule(std::move(quarters));
 }
 
 Result<Rule> read_closed_form(const json& value, const Place& at) {
@@ -103,15 +193,7 @@ Result<RuleKind> read_kind(const json& value, const Place& at, StatementKind sta
                                  shown(name_of(statement)) + (kind ? "; the rules that do are " : " are ") + admitted);
 }
 
-}  // namespace
-
-json rule_to_json(const Claim& claim) {
-  json out = {{"rule", name_of(claim.by)}};
-  std::visit(HintsToJson{out, std::holds_alternative<Count>(claim.statement)}, claim.by);
-  return out;
-}
-
-Result<Rule> read_rule(const json& value, const Place& at, StatementKind statement) {
+Result<Rule> read_nested_rule(const json& value, const Place& at, StatementKind statement, int depth) {
   const Result<RuleKind> kind = read_kind(value, at, statement);
   if (!kind) return kind.failure();
   switch (*kind) {
@@ -123,11 +205,33 @@ Result<Rule> read_rule(const json& value, const Place& at, StatementKind stateme
       return read_closed_form(value, at);
     case RuleKind::preperiodic:
       return read_preperiodic(value, at);
+    case RuleKind::exterior_disc:
+      return read_exterior_disc(value, at);
+    case RuleKind::interior_disc:
+      return read_interior_disc(value, at);
+    case RuleKind::isolated_root:
+      return read_isolated_root(value, at);
+    case RuleKind::witnesses:
+      return read_witnesses(value, at);
+    case RuleKind::quarters:
+      return read_quarters(value, at, statement, depth);
     case RuleKind::real_segment:
       break;
   }
   if (auto problem = check_keys(value, at, {"rule"})) return *problem;
   return Rule(RealSegment{});
+}
+
+}  // namespace
+
+json rule_to_json(const Rule& rule, StatementKind statement) {
+  json out = {{"rule", name_of(rule)}};
+  std::visit(HintsToJson{out, statement}, rule);
+  return out;
+}
+
+Result<Rule> read_rule(const json& value, const Place& at, StatementKind statement) {
+  return read_nested_rule(value, at, statement, 0);
 }
 
 }  // namespace merestone

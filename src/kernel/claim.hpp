@@ -3,6 +3,7 @@
 #include <optional>
 #include <string>
 #include <variant>
+#include <vector>
 
 #include "kernel/region.hpp"
 
@@ -28,7 +29,22 @@ struct Count {
   std::uint64_t index = 0;
   friend bool operator==(const Count&, const Count&) = default;
 };
-using Statement = std::variant<Outside, Inside, Member, Count>;
+/// The region meets the boundary of M.
+struct Straddles {
+  friend bool operator==(const Straddles&, const Straddles&) = default;
+};
+/// Exactly one parameter of the region is a nucleus of exact period `period`: 0 is a point of a cycle of that period.
+struct Nucleus {
+  std::uint64_t period = 0;
+  friend bool operator==(const Nucleus&, const Nucleus&) = default;
+};
+/// Exactly one parameter of the region is a Misiurewicz point of this type: z_preperiod is the first point of the
+/// critical orbit that lies on a cycle, of exact period `period`, and preperiod >= 2.
+struct Misiurewicz {
+  std::uint64_t preperiod = 0, period = 0;
+  friend bool operator==(const Misiurewicz&, const Misiurewicz&) = default;
+};
+using Statement = std::variant<Outside, Inside, Member, Count, Straddles, Nucleus, Misiurewicz>;
 
 // By which rule, with the hints that the rule needs. docs/proofs.md has the lemma of each.
 
@@ -59,7 +75,40 @@ struct Preperiodic {
   std::uint32_t preperiod = 0, period = 0;
   friend bool operator==(const Preperiodic&, const Preperiodic&) = default;
 };
-using Rule = std::variant<Escape, AttractingDisc, ClosedForm, RealSegment, Preperiodic>;
+/// The region lies in a disc about the centre's surroundings that a univalent map of the complement of M covers
+/// (Lemma E3), computed from z_index and its derivatives at the centre, which is outside M.
+struct ExteriorDisc {
+  ComplexDyadic centre;
+  std::uint64_t index = 0;
+  std::uint32_t bits = 0;
+  friend bool operator==(const ExteriorDisc&, const ExteriorDisc&) = default;
+};
+/// The same for the hyperbolic component of the centre and its multiplier (Lemma I2). The cycle at the centre is
+/// established by an attracting disc.
+struct InteriorDisc {
+  ComplexDyadic centre;
+  AttractingDisc cycle;
+  friend bool operator==(const InteriorDisc&, const InteriorDisc&) = default;
+};
+/// Exactly one root of the statement's equation lies in the region, a disc, and it has the exact type (Lemma P2).
+struct IsolatedRoot {
+  std::uint32_t bits = 0;
+  friend bool operator==(const IsolatedRoot&, const IsolatedRoot&) = default;
+};
+struct Claim;
+/// Claims on parts of the region: a Misiurewicz point, or one of members and one of parameters outside (Lemma P3).
+struct Witnesses {
+  std::vector<Claim> claims;
+  friend bool operator==(const Witnesses& a, const Witnesses& b);
+};
+struct Quarters;
+using Rule = std::variant<Escape, AttractingDisc, ClosedForm, RealSegment, Preperiodic, ExteriorDisc, InteriorDisc,
+                          IsolatedRoot, Witnesses, Quarters>;
+/// The same statement holds on each quarter of the box by the rule that stands here for it, in the order of quarters_of.
+struct Quarters {
+  std::vector<Rule> rules;
+  friend bool operator==(const Quarters& a, const Quarters& b);
+};
 
 struct Claim {
   Statement statement;

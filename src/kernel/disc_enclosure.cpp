@@ -60,6 +60,15 @@ Acb ball_around(const ComplexRational& z, slong bits) {
   return ball;
 }
 
+Acb ball_around(const DiscEnclosure& z) {
+  Acb ball;
+  for (const auto& [part, middle] : {std::pair{acb_realref(ball.raw()), &z.re}, {acb_imagref(ball.raw()), &z.im}}) {
+    arb_set_arf(part, *middle);
+    mag_set(arb_radref(part), z.radius);
+  }
+  return ball;
+}
+
 DiscEnclosure DiscEnclosure::of(const Acb& ball) {
   DiscEnclosure disc;
   arf_set(disc.re, arb_midref(acb_realref(ball.raw())));

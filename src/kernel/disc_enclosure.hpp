@@ -22,6 +22,9 @@ struct DiscEnclosure {
 /// A rectangular ball that encloses z, for what discs have no arithmetic for.
 Acb ball_around(const ComplexRational& z, slong bits);
 
+/// A rectangular ball that encloses the disc.
+Acb ball_around(const DiscEnclosure& z);
+
 /// |midpoint|, rounded up.
 void midpoint_modulus_upper(Mag& out, const DiscEnclosure& z);
 /// max |z| over the disc, rounded up.

@@ -45,6 +45,24 @@ Dyadic Dyadic::scaled(const Integer& mantissa, long exponent) {
   return d;
 }
 
+Dyadic operator+(const Dyadic& a, const Dyadic& b) {
+  Dyadic sum;
+  arf_add(sum.held_, a.held_, b.held_, ARF_PREC_EXACT, ARF_RND_DOWN);
+  return sum;
+}
+
+Dyadic operator-(const Dyadic& a, const Dyadic& b) {
+  Dyadic difference;
+  arf_sub(difference.held_, a.held_, b.held_, ARF_PREC_EXACT, ARF_RND_DOWN);
+  return difference;
+}
+
+Dyadic Dyadic::shifted(long exponent) const {
+  Dyadic d;
+  arf_mul_2exp_si(d.held_, held_, exponent);
+  return d;
+}
+
 bool Dyadic::is_moderate() const {
   constexpr slong kMost = 400'000;
   if (arf_is_zero(held_)) return true;

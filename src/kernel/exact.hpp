@@ -49,6 +49,12 @@ class Dyadic {
   friend bool operator==(const Dyadic& a, const Dyadic& b) { return arf_equal(a.held_, b.held_) != 0; }
   friend std::strong_ordering operator<=>(const Dyadic& a, const Dyadic& b) { return arf_cmp(a.held_, b.held_) <=> 0; }
 
+  // exact
+  friend Dyadic operator+(const Dyadic& a, const Dyadic& b);
+  friend Dyadic operator-(const Dyadic& a, const Dyadic& b);
+  /// this·2^exponent, exactly.
+  Dyadic shifted(long exponent) const;
+
   int sign() const { return arf_sgn(held_); }
   /// Bits of the odd mantissa; 0 for zero.
   slong bits() const { return arf_bits(held_); }

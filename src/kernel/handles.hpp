@@ -50,6 +50,9 @@ inline void set_fmpz(fmpz* to, const fmpz* from) { fmpz_set(to, from); }
 inline void init_fmpq(fmpq* x) { fmpq_init(x); }
 inline void clear_fmpq(fmpq* x) { fmpq_clear(x); }
 inline void set_fmpq(fmpq* to, const fmpq* from) { fmpq_set(to, from); }
+inline void init_arb(arb_struct* x) { arb_init(x); }
+inline void clear_arb(arb_struct* x) { arb_clear(x); }
+inline void set_arb(arb_struct* to, const arb_struct* from) { arb_set(to, from); }
 inline void init_acb(acb_struct* x) { acb_init(x); }
 inline void clear_acb(acb_struct* x) { acb_clear(x); }
 inline void set_acb(acb_struct* to, const acb_struct* from) { acb_set(to, from); }
@@ -62,6 +65,8 @@ using Mag = Handle<mag_struct, detail::init_mag, detail::clear_mag, detail::set_
 /// An integer of any size.
 using Integer = Handle<fmpz, detail::init_fmpz, detail::clear_fmpz, detail::set_fmpz>;
 using RationalHandle = Handle<fmpq, detail::init_fmpq, detail::clear_fmpq, detail::set_fmpq>;
+/// A real ball.
+using Arb = Handle<arb_struct, detail::init_arb, detail::clear_arb, detail::set_arb>;
 /// A complex rectangular ball.
 using Acb = Handle<acb_struct, detail::init_acb, detail::clear_acb, detail::set_acb>;
 

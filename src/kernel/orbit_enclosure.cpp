@@ -13,21 +13,36 @@ struct CentreOf {
 
   DiscEnclosure operator()(const Point& point) const { return DiscEnclosure::of(point.at, bits); }
 
-  DiscEnclosure operator()(const Segment& segment) const {
-    const Rational half(1, 2);
-    const Rational lo = segment.lo.to_rational(), hi = segment.hi.to_rational();
-    const DiscEnclosure half_length = DiscEnclosure::of(ComplexRational{half * (hi - lo), Rational(0)}, bits);
-    modulus_upper(spread, half_length);
-    return DiscEnclosure::of(ComplexRational{half * (lo + hi), Rational(0)}, bits);
-  }
+  DiscEnclosure operator()(const Segment& segment) const { return (*this)(bounding_box(segment)); }
 
   DiscEnclosure operator()(const Disc& disc) const {
     arf_get_mag(spread, disc.radius.raw());
     return DiscEnclosure::of(Disc{disc.centre, Dyadic()}, bits);
   }
+
+  DiscEnclosure operator()(const Box& box) const {
+    Mag half_height;
+    arf_get_mag(spread, (box.hi.re - box.lo.re).shifted(-1).raw());
+    arf_get_mag(half_height, (box.hi.im - box.lo.im).shifted(-1).raw());
+    mag_hypot(spread, spread, half_height);
+    return DiscEnclosure::of(Disc{centre_of(box), Dyadic()}, bits);
+  }
 };
 
 }  // namespace
+
+bool is_lost(const DiscEnclosure& z) {
+  return mag_cmp_2exp_si(z.radius, kWidestExponent) > 0 || arf_cmpabs_2exp_si(z.re, kFarthestExponent) > 0 ||
+         arf_cmpabs_2exp_si(z.im, kFarthestExponent) > 0;
+}
+
+void advance_derivative(DiscEnclosure& derivative, const DiscEnclosure& z, slong bits) {
+  multiply(derivative, z, derivative, bits);
+  twice(derivative, derivative);
+  DiscEnclosure one;
+  arf_one(one.re);
+  add(derivative, derivative, one, bits);
+}
 
 OrbitEnclosure::OrbitEnclosure(const Region& parameters, slong bits) : bits_(bits) {
   centre_ = std::visit(CentreOf{bits, spread_}, parameters);
@@ -53,15 +68,10 @@ void OrbitEnclosure::advance_remainder() {
 }
 
 bool OrbitEnclosure::step() {
-  if (mag_cmp_2exp_si(z_.radius, kWidestExponent) > 0 || mag_cmp_2exp_si(remainder_, kWidestExponent) > 0) return false;
-  if (arf_cmpabs_2exp_si(z_.re, kFarthestExponent) > 0 || arf_cmpabs_2exp_si(z_.im, kFarthestExponent) > 0) return false;
+  if (is_lost(z_) || mag_cmp_2exp_si(remainder_, kWidestExponent) > 0) return false;
   if (!is_point_) {
     advance_remainder();
-    multiply(d_, z_, d_, bits_);
-    twice(d_, d_);
-    DiscEnclosure one;
-    arf_one(one.re);
-    add(d_, d_, one, bits_);
+    advance_derivative(d_, z_, bits_);
   }
   square(z_, z_, bits_);
   add(z_, z_, centre_, bits_);

@@ -1,42 +1,30 @@
 #include "kernel/region.hpp"
 
+#include "kernel/overloaded.hpp"
+
 namespace merestone {
 
-namespace {
+ComplexDyadic centre_of(const Box& box) {
+  return {(box.lo.re + box.hi.re).shifted(-1), (box.lo.im + box.hi.im).shifted(-1)};
+}
 
-struct Contains {
-  const ComplexRational& c;
+std::array<Box, 4> quarters_of(const Box& box) {
+  const auto& [lo, hi] = box;
+  const ComplexDyadic middle = centre_of(box);
+  return {Box{lo, middle}, Box{{middle.re, lo.im}, {hi.re, middle.im}}, Box{{lo.re, middle.im}, {middle.re, hi.im}},
+          Box{middle, hi}};
+}
 
-  bool operator()(const Point& point) const { return point.at == c; }
-
-  bool operator()(const Segment& segment) const {
-    return c.im.sign() == 0 && segment.lo.to_rational() <= c.re && c.re <= segment.hi.to_rational();
-  }
-
-  bool operator()(const Disc& disc) const {
-    const Rational radius = disc.radius.to_rational();
-    return norm(c - to_rational(disc.centre)) <= radius * radius;
-  }
-};
-
-struct Bounding {
-  Rectangle operator()(const Point& point) const { return {point.at.re, point.at.re, point.at.im, point.at.im}; }
-
-  Rectangle operator()(const Segment& segment) const {
-    return {segment.lo.to_rational(), segment.hi.to_rational(), Rational(0), Rational(0)};
-  }
-
-  Rectangle operator()(const Disc& disc) const {
-    const ComplexRational centre = to_rational(disc.centre);
-    const Rational radius = disc.radius.to_rational();
-    return {centre.re - radius, centre.re + radius, centre.im - radius, centre.im + radius};
-  }
-};
-
-}  // namespace
-
-bool contains(const Region& region, const ComplexRational& c) { return std::visit(Contains{c}, region); }
-
-Rectangle bounding_rectangle(const Region& region) { return std::visit(Bounding{}, region); }
+Box bounding_box(const Region& region) {
+  return std::visit(Overloaded{[](const Point&) { return Box{}; },
+                               [](const Segment& segment) { return Box{{segment.lo, Dyadic()}, {segment.hi, Dyadic()}}; },
+                               [](const Disc& disc) {
+                                 const auto& [centre, radius] = disc;
+                                 return Box{{centre.re - radius, centre.im - radius},
+                                            {centre.re + radius, centre.im + radius}};
+                               },
+                               [](const Box& box) { return box; }},
+                    region);
+}
 
 }  // namespace merestone

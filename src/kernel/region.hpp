@@ -1,4 +1,5 @@
 #pragma once
+#include <array>
 #include <variant>
 
 #include "kernel/exact.hpp"
@@ -11,31 +12,35 @@ struct Point {
   friend bool operator==(const Point&, const Point&) = default;
 };
 
-/// The closed segment from lo to hi of the real axis; lo <= hi.
+/// The closed segment from lo to hi of the real axis; lo < hi.
 struct Segment {
   Dyadic lo, hi;
   friend bool operator==(const Segment&, const Segment&) = default;
 };
 
-/// The closed disc about centre; radius >= 0.
+/// The closed disc about centre; radius > 0.
 struct Disc {
   ComplexDyadic centre;
   Dyadic radius;
   friend bool operator==(const Disc&, const Disc&) = default;
 };
 
-/// A set of parameters c, given exactly.
-using Region = std::variant<Point, Segment, Disc>;
-
-/// Exact: is c an element of the region?
-bool contains(const Region& region, const ComplexRational& c);
-
-/// An axis-parallel rectangle with exact corners, possibly degenerate.
-struct Rectangle {
-  Rational x_lo, x_hi, y_lo, y_hi;
+/// The closed axis-parallel box of the c with lo.re <= Re c <= hi.re and lo.im <= Im c <= hi.im; lo < hi in both parts.
+struct Box {
+  ComplexDyadic lo, hi;
+  friend bool operator==(const Box&, const Box&) = default;
 };
 
-/// The smallest axis-parallel rectangle that contains the region, exactly.
-Rectangle bounding_rectangle(const Region& region);
+/// A set of parameters c, given exactly.
+using Region = std::variant<Point, Segment, Disc, Box>;
+
+/// The exact centre.
+ComplexDyadic centre_of(const Box& box);
+
+/// The four closed quarters of a box, exactly: lower left, lower right, upper left, upper right.
+std::array<Box, 4> quarters_of(const Box& box);
+
+/// The smallest box, possibly degenerate, that contains the region, exactly. Requires that it is not a point.
+Box bounding_box(const Region& region);
 
 }  // namespace merestone

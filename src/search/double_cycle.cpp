@@ -35,14 +35,16 @@ Return approx_return(Complex c, Complex z, std::uint64_t period) {
   return {z, multiplier};
 }
 
-// Newton's method on f^period(z) - z; nothing when it does not settle.
+// Newton's method on f^period(z) - z; nothing when it does not settle, which shows after a few steps.
 std::optional<Complex> approx_fixed_point(Complex c, Complex z, std::uint64_t period) {
-  constexpr int kMostSteps = 24;
+  constexpr int kMostSteps = 24, kPatientSteps = 3;
+  double before = 1;
   for (int step = 0; step < kMostSteps; ++step) {
     const Return r = approx_return(c, z, period);
     const Complex correction = (r.image - z) / (r.multiplier - Complex{1, 0});
     const double size = approx_modulus(correction);
-    if (!(size < 1)) return std::nullopt;
+    if (!(size < 1) || (step >= kPatientSteps && size > 0.75 * before)) return std::nullopt;
+    before = size;
     z = z - correction;
     if (size < 0x1p-44) return z;
   }

@@ -1,6 +1,10 @@
 #include <algorithm>
+#include <array>
+#include <vector>
 
 #include "kernel/rules/rules.hpp"
+#include "kernel/shape.hpp"
+#include "kernel/work.hpp"
 
 namespace merestone::rules {
 
@@ -42,15 +46,48 @@ std::pair<Interval, Interval> period_two_sides(const Rectangle& r) {
 }
 
 enum class Need { strict, or_equal };
+enum class Holds { throughout, nowhere, unclear };
+
+Holds holds_over(const Rectangle& r, const ClosedForm& by, Need need) {
+  const auto [left, right] = by.period == 1 ? cardioid_sides(r) : period_two_sides(r);
+  if (need == Need::strict) return left.hi < right.lo ? Holds::throughout : left.lo >= right.hi ? Holds::nowhere : Holds::unclear;
+  return left.hi <= right.lo ? Holds::throughout : left.lo > right.hi ? Holds::nowhere : Holds::unclear;
+}
+
+// The two halves of a box, cut across its longer side.
+std::array<Box, 2> halves_of(const Box& box) {
+  const ComplexDyadic middle = centre_of(box);
+  if (box.hi.re - box.lo.re >= box.hi.im - box.lo.im)
+    return {Box{box.lo, {middle.re, box.hi.im}}, Box{{middle.re, box.lo.im}, box.hi}};
+  return {Box{box.lo, {box.hi.re, middle.im}}, Box{{box.lo.re, middle.im}, box.hi}};
+}
+
+// Cuts the region's box until the inequality holds on every cell that meets the region.
+bool holds_by_cells(const Region& region, const ClosedForm& by, Need need) {
+  const Shape shape = shape_of(region);
+  std::vector<Box> open = {bounding_box(region)};
+  for (std::size_t taken = 0; !open.empty(); ++taken) {
+    if (taken == kMostClosedFormCells) return false;
+    const Box cell = open.back();
+    open.pop_back();
+    const Rectangle r = bounding_rectangle(Region(cell));
+    if (are_disjoint(r, shape)) continue;
+    const Holds holds = holds_over(r, by, need);
+    if (holds == Holds::nowhere) return false;
+    if (holds == Holds::unclear)
+      for (Box& half : halves_of(cell)) open.push_back(std::move(half));
+  }
+  return true;
+}
 
 Outcome decide(const Region& region, const ClosedForm& by, Need need) {
-  const Rectangle r = bounding_rectangle(region);
-  const auto [left, right] = by.period == 1 ? cardioid_sides(r) : period_two_sides(r);
-  const bool holds = need == Need::strict ? left.hi < right.lo : left.hi <= right.lo;
+  const bool is_point = std::holds_alternative<Point>(region);
+  const bool holds = is_point ? holds_over(bounding_rectangle(region), by, need) == Holds::throughout
+                              : holds_by_cells(region, by, need);
   const std::string name = by.period == 1 ? "main cardioid" : "disc of period 2";
   if (!holds)
     return NotEstablished{"the inequality of the " + name + (need == Need::strict ? " does not hold strictly" : " does not hold") +
-                          " over the region"};
+                          " over the region" + (is_point ? "" : ", as far as it was cut into cells")};
   return Established{{}, {"I3"}};
 }
 

@@ -1,4 +1,5 @@
 #include "kernel/rules/rules.hpp"
+#include "kernel/shape.hpp"
 
 namespace merestone::rules {
 

@@ -1,0 +1,20 @@
+#pragma once
+#include <string>
+
+#include "search/verdict.hpp"
+
+namespace merestone {
+
+/// Why the verdict about a region holds, in a few words.
+std::string region_reason_in_words(const Proof& proof);
+
+/// The proof on indented lines: witnesses with their places, then the rule. Ends in a newline.
+std::string region_rows(const Rule& by);
+
+/// What a witness is: "nucleus of period 3".
+std::string witness_in_words(const Claim& witness);
+
+/// Where it is, as enclosures of the two parts: "[a, b] + [c, d] i".
+std::string place_in_words(const Region& region);
+
+}  // namespace merestone

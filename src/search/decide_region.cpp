@@ -1,0 +1,242 @@
+#include "search/decide_region.hpp"
+
+#include <algorithm>
+#include <deque>
+
+#include "kernel/rules/rules.hpp"
+#include "kernel/work.hpp"
+#include "lanes/region_escape.hpp"
+#include "search/approx_escape.hpp"
+#include "search/cell_rule.hpp"
+#include "search/region_cells.hpp"
+#include "search/root_search.hpp"
+
+namespace merestone {
+
+namespace {
+
+constexpr slong kSmallestLane = -44;              // binary exponent of the size of cells that double precision takes
+constexpr std::uint64_t kProbeIterations = 20'000, kFirstProbeIterations = 1'000;
+constexpr int kMostMemberSearches = 12;
+constexpr std::uint32_t kBitsForWitness = 64;     // beyond those of the region's size
+
+struct OpenCell {
+  RegionCell at;
+  std::size_t cell;    // of RegionCells
+  int depth;
+  std::size_t around;  // the last probe of a cell around it
+};
+
+// The period of the first component that the rule speaks of; 0 when it speaks of none.
+std::uint64_t first_period(const Rule& rule) {
+  if (const auto* by = std::get_if<InteriorDisc>(&rule)) return by->cycle.period;
+  if (const auto* by = std::get_if<AttractingDisc>(&rule)) return by->period;
+  if (const auto* by = std::get_if<Quarters>(&rule)) return first_period(by->rules.front());
+  return 0;
+}
+
+bool proves_outside(const Rule& rule) {
+  return std::holds_alternative<ExteriorDisc>(rule) || std::holds_alternative<Escape>(rule);
+}
+
+class RegionSearch {
+ public:
+  RegionSearch(const RegionBounds& bounds, const DecideOptions& options)
+      : bounds_(bounds), inner_(shape_of(bounds.inner)), options_(options), deadline_(options.limits.seconds) {}
+
+  RegionVerdict run();
+
+ private:
+  struct Around {  // a probe, and the last one of a cell around its cell
+    Probe probe;
+    std::size_t outer;
+  };
+  static constexpr std::size_t kNone = SIZE_MAX;
+
+  OpenCell opened(const Box& box, std::size_t cell, int depth, std::size_t around) const;
+  bool uses_discs() const { return options_.rules == Rules::all; }
+  std::optional<Rule> settled_by_earlier(const OpenCell& open) const;
+  std::optional<Rule> settle(OpenCell& open);
+  std::optional<Rule> settle_by_probe(const Probe& probe, const OpenCell& open) const;
+  Probe probe(const OpenCell& open);
+  void take_witness(const Probe& probe);
+  void look_for_member(const Region& region);
+  void look_for_outside(const OpenCell& open);
+  void take(OpenCell open);
+  RegionVerdict straddles() const;
+  RegionVerdict settled() const;
+  RegionVerdict undecided() const;
+  std::optional<Proof> count(const Region& region) const;
+
+  const RegionBounds& bounds_;
+  Shape inner_;
+  const DecideOptions& options_;
+  Deadline deadline_;
+  RegionCells cells_;
+  std::deque<OpenCell> queue_;
+  std::vector<Around> around_;
+  std::optional<Claim> member_, outside_;
+  std::uint32_t bits_ = 64;
+  std::size_t unsettled_ = 0, settled_outside_ = 0, settled_inside_ = 0;
+  int member_searches_ = 0;
+  bool ran_out_of_time_ = false, ran_out_of_bits_ = false;
+};
+
+OpenCell RegionSearch::opened(const Box& box, std::size_t cell, int depth, std::size_t around) const {
+  OpenCell open{{box, std::nullopt}, cell, depth, around};
+  if (rounds_to_nearest() && size_exponent(box) > kSmallestLane) open.at.lane = enclose_in_double(box);
+  return open;
+}
+
+std::optional<Rule> RegionSearch::settled_by_earlier(const OpenCell& open) const {
+  for (std::size_t i = open.around; i != kNone; i = around_[i].outer)
+    if (certainly_covers(around_[i].probe, open.at)) return around_[i].probe.by;
+  return std::nullopt;
+}
+
+Probe RegionSearch::probe(const OpenCell& open) {
+  // what is left open by a short probe is cut, and longer probes follow
+  const std::uint64_t iterations = std::min(kProbeIterations, kFirstProbeIterations << open.depth);
+  const ProbeEffort effort{std::min(options_.limits.iterations, iterations), bits_, uses_discs()};
+  if (open.at.lane) return probe_in_double(open.at.lane->x, open.at.lane->y, effort, deadline_);
+  return probe_in_balls(centre_of(open.at.box), effort, deadline_);
+}
+
+// Of some parameters of the box the one that escapes first, as it seems, is proved to escape.
+void RegionSearch::look_for_outside(const OpenCell& open) {
+  if (outside_ || !open.at.lane) return;
+  const std::uint64_t iterations = std::min(kProbeIterations, kFirstProbeIterations << open.depth);
+  const auto found = approx_escape(*open.at.lane, std::min(options_.limits.iterations, iterations));
+  if (!found) return;
+  const ProbeEffort effort{found->index + 1, bits_ + kBitsForWitness, false};
+  take_witness(probe_in_balls({Dyadic(found->x), Dyadic(found->y)}, effort, deadline_));
+}
+
+void RegionSearch::take_witness(const Probe& probe) {
+  if (!probe.point) return;
+  std::optional<Claim>& witness = probe.is_outside() ? outside_ : member_;
+  if (witness || !is_within(shape_of(to_rational(probe.at)), inner_)) return;
+  witness = Claim{probe.point->statement, Point{to_rational(probe.at)}, std::nullopt, probe.point->by};
+}
+
+void RegionSearch::look_for_member(const Region& region) {
+  if (member_ || member_searches_ == kMostMemberSearches) return;
+  ++member_searches_;
+  const auto claim = find_member(region, std::min(options_.limits.iterations, kProbeIterations), deadline_);
+  if (claim && is_within(shape_of(claim->region), inner_)) member_ = claim;
+}
+
+// One disc settles a typed disc although it does not contain its bounding box.
+bool covers_disc(const Probe& probe, const Region& region) {
+  if (!std::holds_alternative<Disc>(region)) return false;
+  if (!probe.circle) return probe.disc && is_within(shape_of(region), shape_of(Region(*probe.disc)));
+  const auto [x, y, radius] = *probe.circle;
+  return is_within(shape_of(region), shape_of(Region(Disc{{Dyadic(x), Dyadic(y)}, Dyadic(radius)})));
+}
+
+std::optional<Rule> RegionSearch::settle_by_probe(const Probe& probe, const OpenCell& open) const {
+  if (probe.by && certainly_covers(probe, open.at)) return probe.by;
+  if (probe.by && open.cell == RegionCells::kWhole && covers_disc(probe, bounds_.outer)) return probe.by;
+  // where there is no exterior disc, or a poor one: far from M
+  if (uses_discs() && !(probe.is_outside() && (open.at.lane || !probe.by))) return std::nullopt;
+  return elementary_rule(probe, open.at, bits_);
+}
+
+std::optional<Rule> RegionSearch::settle(OpenCell& open) {
+  if (auto rule = settled_by_earlier(open)) return rule;
+  Probe found = probe(open);
+  if (!found.point) return std::nullopt;
+  take_witness(found);
+  auto rule = settle_by_probe(found, open);
+  if (found.by) {
+    around_.push_back({std::move(found), open.around});
+    open.around = around_.size() - 1;
+  }
+  return rule;
+}
+
+void RegionSearch::take(OpenCell open) {
+  if (auto rule = settle(open)) {
+    ++(proves_outside(*rule) ? settled_outside_ : settled_inside_);
+    cells_.settle(open.cell, std::move(*rule));
+    return;
+  }
+  look_for_outside(open);
+  look_for_member(open.at.box);
+  if (member_ && outside_) return;
+  if (open.depth == kDeepestRule || cells_.count() + 4 > options_.limits.cells) {
+    ++unsettled_;
+    return;
+  }
+  const std::size_t first = cells_.cut(open.cell);
+  const std::array<Box, 4> quarters = quarters_of(open.at.box);
+  for (std::size_t i = 0; i < quarters.size(); ++i)
+    queue_.push_back(opened(quarters[i], first + i, open.depth + 1, open.around));
+}
+
+RegionVerdict RegionSearch::run() {
+  const Box whole = bounding_box(bounds_.outer);
+  bits_ = static_cast<std::uint32_t>(std::max<slong>(64, 64 - 3 * size_exponent(whole)));
+  if (bits_ > options_.limits.bits) {
+    ran_out_of_bits_ = true;
+    return undecided();
+  }
+  queue_.push_back(opened(whole, RegionCells::kWhole, 0, kNone));
+  while (!queue_.empty() && !(member_ && outside_)) {
+    if (deadline_.passed_now()) {
+      ran_out_of_time_ = true;
+      break;
+    }
+    OpenCell open = std::move(queue_.front());
+    queue_.pop_front();
+    take(std::move(open));
+  }
+  if (member_ && outside_) return straddles();
+  const bool all_settled = queue_.empty() && unsettled_ == 0 && (settled_outside_ == 0 || settled_inside_ == 0);
+  return all_settled ? settled() : undecided();
+}
+
+RegionVerdict RegionSearch::straddles() const {
+  Witnesses witnesses{{*member_}};
+  if (!std::holds_alternative<Misiurewicz>(member_->statement)) witnesses.claims.push_back(*outside_);
+  return {Proof{Straddles{}, std::move(witnesses)}, bounds_.inner};
+}
+
+// The escape index, where it is the same throughout.
+std::optional<Proof> RegionSearch::count(const Region& region) const {
+  const auto lane = enclose_in_double(bounding_box(region));
+  if (!lane || !rounds_to_nearest()) return std::nullopt;
+  const RegionEscape whole = region_escape({lane->x, lane->y, lane->reach_upper()}, options_.limits.iterations);
+  if (!whole.is_count) return std::nullopt;
+  return Proof{Count{Dyadic(2.0), whole.index}, Escape{0, kDoubleBits}};
+}
+
+RegionVerdict RegionSearch::settled() const {
+  const Rule rule = cells_.rule();
+  const bool is_cut = std::holds_alternative<Quarters>(rule);
+  const Region region = is_cut ? Region(bounding_box(bounds_.outer)) : bounds_.outer;
+  if (settled_outside_ > 0) {
+    if (!is_cut)
+      if (auto proof = count(region)) return {*proof, region};
+    return {Proof{Outside{}, rule}, region};
+  }
+  const ClosedForm form{static_cast<std::uint32_t>(first_period(rule))};
+  const bool has_form = form.period == 1 || form.period == 2;
+  if (has_form && std::holds_alternative<Established>(rules::closed_form_inside(region, form)))
+    return {Proof{Inside{}, form}, region};
+  return {Proof{Inside{}, rule}, region};
+}
+
+RegionVerdict RegionSearch::undecided() const {
+  const Limit limit = ran_out_of_time_ ? Limit::time : ran_out_of_bits_ ? Limit::precision : Limit::cells;
+  return {Undecided{limit, std::min(options_.limits.iterations, kProbeIterations), bits_, cells_.count()}, bounds_.outer};
+}
+
+}  // namespace
+
+RegionVerdict decide_region(const Shape& typed, const DecideOptions& options) {
+  const RegionBounds bounds = bound_region(typed);
+  return RegionSearch(bounds, options).run();
+}
+
+}  // namespace merestone

@@ -1,0 +1,236 @@
+#include "search/root_search.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <complex>
+
+#include "kernel/check.hpp"
+#include "kernel/dispatch.hpp"
+#include "search/region_bounds.hpp"
+
+namespace merestone {
+
+namespace {
+
+using Complex = std::complex<double>;
+
+Acb as_ball(const ApproxParameter& c) {
+  Acb ball;
+  arb_set_arf(acb_realref(ball.raw()), c.re);
+  arb_set_arf(acb_imagref(ball.raw()), c.im);
+  return ball;
+}
+
+ApproxParameter midpoint_of(const Acb& ball) {
+  ApproxParameter c;
+  arf_set(c.re, arb_midref(acb_realref(ball.raw())));
+  arf_set(c.im, arb_midref(acb_imagref(ball.raw())));
+  return c;
+}
+
+// z_n and its derivative with respect to c, midpoints only.
+class ApproxJet {
+ public:
+  ApproxJet(const ApproxParameter& c, slong bits) : c_(as_ball(c)), bits_(bits) {}
+
+  void step() {
+    acb_mul(slope, slope, z, bits_);
+    acb_mul_2exp_si(slope, slope, 1);
+    acb_add_ui(slope, slope, 1, bits_);
+    acb_get_mid(slope, slope);
+    acb_mul(z, z, z, bits_);
+    acb_add(z, z, c_, bits_);
+    acb_get_mid(z, z);
+    ++index;
+  }
+
+  Acb z, slope;
+  std::uint64_t index = 0;
+
+ private:
+  Acb c_;
+  slong bits_;
+};
+
+slong approx_exponent(const Acb& z) {
+  Mag size;
+  acb_get_mag(size, z);
+  return mag_is_zero(size) ? WORD_MIN / 4 : fmpz_get_si(MAG_EXPREF(size.raw()));
+}
+
+// Newton's correction g / g' at c; nothing when the orbit runs away.
+std::optional<Acb> correction(const RootEquation& equation, const ApproxParameter& c, slong bits, Deadline& deadline) {
+  ApproxJet jet(c, bits);
+  Acb value, slope;
+  while (jet.index < equation.late) {
+    if (jet.index == equation.early) {
+      value = jet.z;
+      slope = jet.slope;
+    }
+    jet.step();
+    if (approx_exponent(jet.z) > 64 || deadline.passed()) return std::nullopt;
+  }
+  acb_add(value, value, jet.z, bits);
+  acb_add(slope, slope, jet.slope, bits);
+  acb_div(value, value, slope, bits);
+  acb_get_mid(value, value);
+  if (!acb_is_finite(value)) return std::nullopt;
+  return value;
+}
+
+constexpr slong kSmallestInDouble = -40;  // binary exponent of the size of regions in which double precision finds its way
+constexpr double kSteepest = 32;  // slopes in units of the region's size; beyond, roots are everywhere
+
+// The orbit at the region's centre, its slopes in units of the region's size.
+struct ScaledOrbit {
+  std::vector<Complex> z, slope;
+
+  // False when there is no need to go on.
+  bool take(Complex value, Complex steepness) {
+    z.push_back(value);
+    slope.push_back(steepness);
+    return std::norm(value) <= 0x1p10 && std::norm(steepness) <= kSteepest * kSteepest;
+  }
+};
+
+Complex rounded(const Acb& value, slong shift) {
+  Acb scaled;
+  acb_mul_2exp_si(scaled, value, shift);
+  return {arf_get_d(arb_midref(acb_realref(scaled.raw())), ARF_RND_NEAR),
+          arf_get_d(arb_midref(acb_imagref(scaled.raw())), ARF_RND_NEAR)};
+}
+
+Complex rounded(const ApproxParameter& c) { return {arf_get_d(c.re, ARF_RND_NEAR), arf_get_d(c.im, ARF_RND_NEAR)}; }
+
+ScaledOrbit orbit_in_double(Complex c, double size, std::uint64_t most) {
+  ScaledOrbit orbit;
+  Complex z = 0, slope = 0;
+  for (std::uint64_t n = 0; orbit.take(z, size * slope) && n < most; ++n) {
+    slope = 2.0 * z * slope + 1.0;
+    z = z * z + c;
+  }
+  return orbit;
+}
+
+ScaledOrbit orbit_around(const ApproxParameter& centre, slong size, slong bits, std::uint64_t most) {
+  if (size > kSmallestInDouble) return orbit_in_double(rounded(centre), std::ldexp(1.0, static_cast<int>(size)), most);
+  ScaledOrbit orbit;
+  ApproxJet jet(centre, bits);
+  while (orbit.take(rounded(jet.z, 0), rounded(jet.slope, size)) && jet.index < most) jet.step();
+  return orbit;
+}
+
+struct Candidate {
+  RootEquation equation;
+  double distance;  // of the root, as Newton's first step has it, in units of the region's size
+};
+
+constexpr std::size_t kMostPairs = 256;  // indices among which Misiurewicz points are looked for
+constexpr double kReach = 0.75;          // how far a first step may lead, in units of the region's size
+constexpr std::size_t kMostTrials = 4;   // of nuclei and of Misiurewicz points
+
+void keep_near(std::vector<Candidate>& kept, const ScaledOrbit& orbit, std::size_t early, std::size_t late) {
+  const double distance = std::abs((orbit.z[late] + orbit.z[early]) / (orbit.slope[late] + orbit.slope[early]));
+  if (distance < kReach) kept.push_back({{early, late}, distance});
+}
+
+// Nuclei first, the least periods first.
+std::vector<Candidate> candidates(const ScaledOrbit& orbit) {
+  std::vector<Candidate> nuclei, others;
+  for (std::size_t n = 1; n < orbit.z.size() && nuclei.size() < kMostTrials; ++n) keep_near(nuclei, orbit, 0, n);
+  for (std::size_t n = 2; n < std::min(orbit.z.size(), kMostPairs) && others.size() < kMostTrials; ++n)
+    for (std::size_t m = 1; m < n && others.size() < kMostTrials; ++m) keep_near(others, orbit, m, n);
+  nuclei.insert(nuclei.end(), others.begin(), others.end());
+  return nuclei;
+}
+
+// Newton's method in double precision, from the centre of a region of the given size and not far out of it.
+std::optional<Complex> approx_root_in_double(const RootEquation& equation, Complex centre, double size) {
+  constexpr int kMostSteps = 16, kPatientSteps = 4;
+  Complex c = centre;
+  double before = size;
+  for (int step = 0; step < kMostSteps; ++step) {
+    Complex z = 0, slope = 0, value = 0, steepness = 0;
+    for (std::uint64_t n = 0; n < equation.late; ++n) {
+      if (n == equation.early) value = z, steepness = slope;
+      slope = 2.0 * z * slope + 1.0;
+      z = z * z + c;
+    }
+    const Complex change = (value + z) / (steepness + slope);
+    c -= change;
+    if (!(std::abs(c - centre) <= 2 * size)) return std::nullopt;
+    if (std::abs(change) < std::max(0x1p-36 * size, 0x1p-49)) return c;
+    if (step >= kPatientSteps && std::abs(change) > 0.5 * before) return std::nullopt;
+    before = std::abs(change);
+  }
+  return std::nullopt;
+}
+
+// A start from which Newton's method at high precision settles at once; nothing where it leads out of the region.
+std::optional<ApproxParameter> good_start(const RootEquation& equation, const ApproxParameter& centre, slong size) {
+  if (size <= kSmallestInDouble) return centre;
+  const auto root = approx_root_in_double(equation, rounded(centre), std::ldexp(1.0, static_cast<int>(size)));
+  if (!root) return std::nullopt;
+  ApproxParameter start;
+  arf_set_d(start.re, root->real());
+  arf_set_d(start.im, root->imag());
+  return start;
+}
+
+ApproxParameter centre_of(const Region& region) {
+  const ComplexDyadic centre = merestone::centre_of(bounding_box(region));
+  ApproxParameter c;
+  arf_set(c.re, centre.re.raw());
+  arf_set(c.im, centre.im.raw());
+  return c;
+}
+
+}  // namespace
+
+Statement RootEquation::type() const {
+  if (early == 0) return Nucleus{late};
+  return Misiurewicz{early + 1, late - early};
+}
+
+std::optional<ApproxParameter> approx_root(const RootEquation& equation, const ApproxParameter& start, slong bits,
+                                           Deadline& deadline) {
+  constexpr int kMostSteps = 40;
+  Acb c = as_ball(start);
+  for (int step = 0; step < kMostSteps; ++step) {
+    const auto change = correction(equation, midpoint_of(c), bits, deadline);
+    if (!change || approx_exponent(*change) > 1) return std::nullopt;
+    acb_sub(c, c, *change, bits);
+    acb_get_mid(c, c);
+    if (approx_exponent(*change) < -bits * 3 / 4) return midpoint_of(c);
+  }
+  return std::nullopt;
+}
+
+std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParameter& root, slong places, slong bits) {
+  Integer one;
+  fmpz_one(one);
+  const Disc disc{{Dyadic(root.re.raw()), Dyadic(root.im.raw())}, Dyadic::scaled(one, -places)};
+  Claim claim{equation.type(), disc, std::nullopt, IsolatedRoot{static_cast<std::uint32_t>(bits)}};
+  if (!std::holds_alternative<Established>(establish_by(claim.statement, claim.region, claim.by))) return std::nullopt;
+  return claim;
+}
+
+std::optional<Claim> find_member(const Region& region, std::uint64_t iterations, Deadline& deadline) {
+  const slong size = size_exponent(region);
+  const slong places = 32 - size, bits = 2 * places + 64;
+  const ApproxParameter centre = centre_of(region);
+  const Shape shape = shape_of(region);
+  for (const Candidate& candidate : candidates(orbit_around(centre, size, bits, iterations))) {
+    if (deadline.passed_now()) break;
+    const auto start = good_start(candidate.equation, centre, size);
+    const auto root = start ? approx_root(candidate.equation, *start, bits, deadline) : std::nullopt;
+    if (!root) continue;
+    const ComplexRational at = to_rational({Dyadic(root->re.raw()), Dyadic(root->im.raw())});
+    if (!is_within(shape_of(at), shape)) continue;
+    const auto claim = prove_root(candidate.equation, *root, places, bits);
+    if (claim && is_within(shape_of(claim->region), shape)) return claim;
+  }
+  return std::nullopt;
+}
+
+}  // namespace merestone

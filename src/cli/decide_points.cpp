@@ -9,13 +9,6 @@ namespace {
 // Small enough that a few hard parameters do not hold up many easy ones behind them.
 constexpr std::size_t kBatch = 64;
 
-// A number as it may stand in a line that has several: without blanks.
-std::string packed(const std::string& word) {
-  std::string text = plain_text(word);
-  std::erase_if(text, [](char c) { return c == ' ' || c == '\t'; });
-  return text;
-}
-
 }  // namespace
 
 Result<DecidePoints> DecidePoints::open(const DecideWords& words) {

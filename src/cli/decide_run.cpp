@@ -14,6 +14,7 @@
 #include "cli/decide_tally.hpp"
 #include "cli/expectation.hpp"
 #include "cli/interruption.hpp"
+#include "cli/refuse.hpp"
 #include "cli/provenance.hpp"
 #include "cli/shared_output.hpp"
 #include "cli/shared_progress.hpp"
@@ -174,11 +175,6 @@ int DecideRun::run() {
                                         [this](Reply reply) { print(std::move(reply)); }));
   if (!stopped_) finish();
   return Interruption::signal() != 0 ? 128 + Interruption::signal() : static_cast<int>(code_);
-}
-
-int refuse(ExitCode code, const Failure& failure) {
-  fmt::print(stderr, "merestone: {}\n", failure.message);
-  return static_cast<int>(code);
 }
 
 }  // namespace

@@ -4,6 +4,8 @@
 
 #include "cli/decide_options.hpp"
 #include "cli/decide_run.hpp"
+#include "cli/locate_options.hpp"
+#include "cli/locate_run.hpp"
 #include "cli/shared_arguments.hpp"
 #include "cli/shared_manual.hpp"
 #include "cli/shared_output.hpp"
@@ -21,7 +23,9 @@ constexpr const char* kDescription =
 
 constexpr const char* kFooter = R"(Start with:
   merestone decide -0.75+0.1i           a verdict, with its proof in a line
-  merestone decide --help               parameters, lists, limits, certificates
+  merestone decide --box A B            a verdict about every parameter of a box
+  merestone locate --disc C R           what the disc contains, with proved decimals
+  merestone decide --help               parameters, regions, lists, limits, certificates
   merestone-check FILE                  what a colleague runs on a certificate
 
 Files of this program: docs/proofs.md has the lemmas, docs/trust.md says what a verdict rests on.
@@ -41,6 +45,8 @@ int run(int count, char** words) {
   program.require_subcommand(1);
   DecideWords decide_words;
   const CLI::App* decide = add_decide_command(program, decide_words);
+  LocateWords locate_words;
+  const CLI::App* locate = add_locate_command(program, locate_words);
   ManualFormat format{};
   CLI::App* manual_command =
       program.add_subcommand("manual", "Print the manual page or the completion for a shell");
@@ -49,6 +55,7 @@ int run(int count, char** words) {
       ->type_name("{man,bash,zsh,fish}");
   if (const auto code = parse_words(program, arguments(count, words))) return static_cast<int>(*code);
   if (decide->parsed()) return run_decide(decide_words, joined(count, words));
+  if (locate->parsed()) return run_locate(locate_words, joined(count, words));
   Output output;
   output.write(manual(program, format));
   return static_cast<int>(output.failed() ? ExitCode::io_failed : ExitCode::established);

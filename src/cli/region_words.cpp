@@ -28,12 +28,16 @@ std::string witnesses_in_words(const Witnesses& by) {
 
 }  // namespace
 
+std::string type_in_words(const Statement& type) {
+  if (const auto* nucleus = std::get_if<Nucleus>(&type)) return fmt::format("nucleus of period {}", nucleus->period);
+  const auto& other = std::get<Misiurewicz>(type);
+  return fmt::format("Misiurewicz point of preperiod {} and period {}", other.preperiod, other.period);
+}
+
 std::string witness_in_words(const Claim& witness) {
   return std::visit(
-      Overloaded{[](const Nucleus& type) { return fmt::format("a nucleus of period {}", type.period); },
-                 [](const Misiurewicz& type) {
-                   return fmt::format("a Misiurewicz point of preperiod {} and period {}", type.preperiod, type.period);
-                 },
+      Overloaded{[](const Nucleus& type) { return "a " + type_in_words(type); },
+                 [](const Misiurewicz& type) { return "a " + type_in_words(type); },
                  [](const Count& count) { return fmt::format("a parameter of escape index {}", count.index); },
                  [&](const Outside&) {
                    const auto* escape = std::get_if<Escape>(&witness.by);

@@ -11,6 +11,9 @@ std::string region_reason_in_words(const Proof& proof);
 /// The proof on indented lines: witnesses with their places, then the rule. Ends in a newline.
 std::string region_rows(const Rule& by);
 
+/// "nucleus of period 3", "Misiurewicz point of preperiod 2 and period 1". Requires one of these statements.
+std::string type_in_words(const Statement& type);
+
 /// What a witness is: "nucleus of period 3".
 std::string witness_in_words(const Claim& witness);
 

@@ -29,4 +29,10 @@ std::string plain_text(std::string_view text) {
   return out;
 }
 
+std::string packed(std::string_view text) {
+  std::string plain = plain_text(text);
+  std::erase_if(plain, [](char c) { return c == ' ' || c == '\t'; });
+  return plain;
+}
+
 }  // namespace merestone

@@ -13,4 +13,7 @@ std::vector<std::string> arguments(int count, const char* const* words);
 /// The text with each minus sign of typography (U+2212) as a hyphen-minus, without blanks around it.
 std::string plain_text(std::string_view text);
 
+/// The same without any blanks: a number as it may stand in a line that has several.
+std::string packed(std::string_view text);
+
 }  // namespace merestone

@@ -122,8 +122,10 @@ void RegionSearch::take_witness(const Probe& probe) {
 void RegionSearch::look_for_member(const Region& region) {
   if (member_ || member_searches_ == kMostMemberSearches) return;
   ++member_searches_;
-  const auto claim = find_member(region, std::min(options_.limits.iterations, kProbeIterations), deadline_);
-  if (claim && is_within(shape_of(claim->region), inner_)) member_ = claim;
+  RootHunt hunt;
+  hunt.iterations = std::min(options_.limits.iterations, hunt.iterations);
+  const std::vector<Claim> found = find_roots(region, hunt, deadline_);
+  if (!found.empty() && is_within(shape_of(found.front().region), inner_)) member_ = found.front();
 }
 
 // One disc settles a typed disc although it does not contain its bounding box.

@@ -127,7 +127,6 @@ struct Candidate {
 
 constexpr std::size_t kMostPairs = 256;  // indices among which Misiurewicz points are looked for
 constexpr double kReach = 0.75;          // how far a first step may lead, in units of the region's size
-constexpr std::size_t kMostTrials = 4;   // of nuclei and of Misiurewicz points
 
 void keep_near(std::vector<Candidate>& kept, const ScaledOrbit& orbit, std::size_t early, std::size_t late) {
   const double distance = std::abs((orbit.z[late] + orbit.z[early]) / (orbit.slope[late] + orbit.slope[early]));
@@ -135,11 +134,11 @@ void keep_near(std::vector<Candidate>& kept, const ScaledOrbit& orbit, std::size
 }
 
 // Nuclei first, the least periods first.
-std::vector<Candidate> candidates(const ScaledOrbit& orbit) {
+std::vector<Candidate> candidates(const ScaledOrbit& orbit, std::size_t trials) {
   std::vector<Candidate> nuclei, others;
-  for (std::size_t n = 1; n < orbit.z.size() && nuclei.size() < kMostTrials; ++n) keep_near(nuclei, orbit, 0, n);
-  for (std::size_t n = 2; n < std::min(orbit.z.size(), kMostPairs) && others.size() < kMostTrials; ++n)
-    for (std::size_t m = 1; m < n && others.size() < kMostTrials; ++m) keep_near(others, orbit, m, n);
+  for (std::size_t n = 1; n < orbit.z.size() && nuclei.size() < trials; ++n) keep_near(nuclei, orbit, 0, n);
+  for (std::size_t n = 2; n < std::min(orbit.z.size(), kMostPairs) && others.size() < trials; ++n)
+    for (std::size_t m = 1; m < n && others.size() < trials; ++m) keep_near(others, orbit, m, n);
   nuclei.insert(nuclei.end(), others.begin(), others.end());
   return nuclei;
 }
@@ -215,22 +214,23 @@ std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParame
   return claim;
 }
 
-std::optional<Claim> find_member(const Region& region, std::uint64_t iterations, Deadline& deadline) {
+std::vector<Claim> find_roots(const Region& region, const RootHunt& hunt, Deadline& deadline) {
   const slong size = size_exponent(region);
-  const slong places = 32 - size, bits = 2 * places + 64;
+  const slong places = hunt.places.value_or(32 - size), bits = 2 * std::max(places, 32 - size) + 64;
   const ApproxParameter centre = centre_of(region);
   const Shape shape = shape_of(region);
-  for (const Candidate& candidate : candidates(orbit_around(centre, size, bits, iterations))) {
-    if (deadline.passed_now()) break;
+  std::vector<Claim> found;
+  for (const Candidate& candidate : candidates(orbit_around(centre, size, bits, hunt.iterations), hunt.trials)) {
+    if (deadline.passed_now() || found.size() == hunt.most) break;
     const auto start = good_start(candidate.equation, centre, size);
     const auto root = start ? approx_root(candidate.equation, *start, bits, deadline) : std::nullopt;
     if (!root) continue;
     const ComplexRational at = to_rational({Dyadic(root->re.raw()), Dyadic(root->im.raw())});
     if (!is_within(shape_of(at), shape)) continue;
-    const auto claim = prove_root(candidate.equation, *root, places, bits);
-    if (claim && is_within(shape_of(claim->region), shape)) return claim;
+    auto claim = prove_root(candidate.equation, *root, places, bits);
+    if (claim && is_within(shape_of(claim->region), shape)) found.push_back(std::move(*claim));
   }
-  return std::nullopt;
+  return found;
 }
 
 }  // namespace merestone

@@ -32,8 +32,16 @@ std::optional<ApproxParameter> approx_root(const RootEquation& equation, const A
 /// (Lemma P2), established by the kernel. The approximation is good to about 2 `places` bits.
 std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParameter& root, slong places, slong bits);
 
-/// Looks for a nucleus or a Misiurewicz point in the region, of a small period as far as Newton's method leads from the
-/// centre, and proves it. The claim's region lies in `region`.
-std::optional<Claim> find_member(const Region& region, std::uint64_t iterations, Deadline& deadline);
+/// How far roots are looked for along the orbit of a region's centre.
+struct RootHunt {
+  std::uint64_t iterations = 20'000;  // largest index in an equation
+  std::size_t trials = 4;             // equations that are tried, of nuclei and of Misiurewicz points
+  std::size_t most = 1;               // roots that are wanted
+  std::optional<slong> places;        // of each root's disc; by default 32 more than the region's size has
+};
+
+/// Looks for nuclei, then Misiurewicz points, in the region, of small periods first, as far as Newton's method leads from
+/// the centre, and proves them. Each claim's region lies in `region`.
+std::vector<Claim> find_roots(const Region& region, const RootHunt& hunt, Deadline& deadline);
 
 }  // namespace merestone

@@ -11,7 +11,8 @@ struct TrackedJet {
 
 namespace detail {
 
-inline double modulus(double x, double y) { return std::sqrt(x * x + y * y); }
+// |x + iy|, as rounded, and never too small by underflow (Lemma E4, derivatives)
+inline double modulus(double x, double y) { return std::sqrt(x * x + y * y + 0x1p-1000); }
 
 }  // namespace detail
 

@@ -4,11 +4,13 @@ import hashlib
 import json
 import os
 import pathlib
+import re
 import struct
 import subprocess
 import tempfile
 import unittest
 import zlib
+from fractions import Fraction
 
 CHECK = os.environ["MERESTONE_CHECK"]
 
@@ -33,6 +35,48 @@ def member(k):
 def costly(index, bits=64):
     """A claim that implies `index` steps of an orbit; 0 never escapes, so it is never established."""
     return {"claim": "outside", "region": {"point": ["0", "0"]}, "by": {"rule": "escape", "index": index, "bits": bits}}
+
+
+def dyadic(x):
+    """The spelling of a dyadic rational."""
+    x = Fraction(x)
+    if x == 0:
+        return "0x0p0"
+    exponent = 1 - x.denominator.bit_length()
+    mantissa = abs(x.numerator)
+    zeros = (mantissa & -mantissa).bit_length() - 1
+    return f"{'-' if x < 0 else ''}0x{mantissa >> zeros:x}p{exponent + zeros}"
+
+
+def exact(spelling):
+    """The value of a dyadic's spelling."""
+    sign, mantissa, exponent = re.fullmatch(r"(-?)0x([0-9a-f]+)p(-?\d+)", spelling).groups()
+    return Fraction(int(sign + mantissa, 16)) * Fraction(2) ** int(exponent)
+
+
+def near(decimal, bits=60):
+    """The multiple of 2^-bits nearest to a decimal."""
+    return Fraction(round(Fraction(decimal) * 2**bits), 2**bits)
+
+
+def disc(re, im, radius):
+    return {"centre": [dyadic(re), dyadic(im)], "radius": dyadic(radius)}
+
+
+def box(left, right, bottom, top, parts=1):
+    """A box region; the sides are counted in parts of 1."""
+    ends = [dyadic(Fraction(end, parts)) for end in (left, right, bottom, top)]
+    return {"box": {"re": ends[:2], "im": ends[2:]}}
+
+
+def nucleus(period, region, bits=128, **more):
+    return {"claim": "nucleus", "period": period, "region": {"disc": region},
+            "by": {"rule": "isolated-root", "bits": bits}, **more}
+
+
+def misiurewicz(preperiod, period, region, bits=128, **more):
+    return {"claim": "misiurewicz", "preperiod": preperiod, "period": period, "region": {"disc": region},
+            "by": {"rule": "isolated-root", "bits": bits}, **more}
 
 
 def document(*claims):

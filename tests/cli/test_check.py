@@ -9,14 +9,8 @@ import unittest
 from decimal import Decimal
 from fractions import Fraction
 
-from check_support import (CHECK, CheckTest, Run, canonical, container, container_digest, costly, document, member,
-                           near_root)
-
-
-def exact(spelling):
-    """The value of a dyadic's spelling."""
-    sign, mantissa, exponent = re.fullmatch(r"(-?)0x([0-9a-f]+)p(-?\d+)", spelling).groups()
-    return Fraction(int(sign + mantissa, 16)) * Fraction(2) ** int(exponent)
+from check_support import (CHECK, CheckTest, Run, canonical, container, container_digest, costly, document, exact,
+                           member, near_root)
 
 
 def literal(text):

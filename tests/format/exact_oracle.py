@@ -8,6 +8,8 @@ crudest bound of the error suffices; everything else on exact integers and fract
 import re
 from fractions import Fraction as F
 
+import root_oracle
+
 
 def number(text):
     dyadic = re.fullmatch(r"(-?)0x([0-9a-f]+)p(-?[0-9]+)", text)
@@ -25,6 +27,9 @@ def samples(region):
     if kind == "segment":
         lo, hi = map(number, value)
         return [(lo + (hi - lo) * F(k, 8), F(0)) for k in range(9)]
+    if kind == "box":
+        (x0, x1), (y0, y1) = (map(number, value[side]) for side in ("re", "im"))
+        return [(x0 + (x1 - x0) * F(k, 4), y0 + (y1 - y0) * F(m, 4)) for k in range(0, 5, 2) for m in range(0, 5, 2)]
     re_part, im_part = map(number, value["centre"])
     r = number(value["radius"])
     directions = [(x * s, y * t) for x, y in ((1, 0), (0, 1), (F(3, 5), F(4, 5)), (F(4, 5), F(3, 5)))
@@ -138,6 +143,10 @@ def attracting_period(c, most):
 
 def truth(claim, most):
     """True, False or None, looking at no more than `most` steps of an orbit."""
+    if claim["claim"] == "straddles":
+        return _straddles(claim["region"], most)
+    if claim["claim"] in ("nucleus", "misiurewicz"):
+        return _root(claim)
     judge = {"outside": _outside, "count": _count, "member": is_member, "inside": is_interior}[claim["claim"]]
     arguments = (claim, most) if judge is _count else (most,)
     verdicts = [judge(c, *arguments) for c in samples(claim["region"])]
@@ -149,6 +158,24 @@ def truth(claim, most):
 def _outside(c, most):
     member = is_member(c, most)
     return None if member is None else not member
+
+
+def _straddles(region, most):
+    points = samples(region)
+    if {True, False} <= {is_member(c, most) for c in points}:
+        return True
+    points, radius = ([points[0]], number(region["disc"]["radius"])) if "disc" in region else (points, F(0))
+    # The round parts of the interior of M that are known exactly; a convex region lies in them if its corners do.
+    is_within = radius < F(1, 4) and any(
+        all((x - centre) ** 2 + y * y < (F(1, 4) - radius) ** 2 for x, y in points) for centre in (0, -1))
+    return False if is_within else None
+
+
+def _root(claim):
+    region = claim["region"]
+    if "disc" not in region:
+        return None
+    return root_oracle.truth(claim, tuple(map(number, region["disc"]["centre"])), number(region["disc"]["radius"]))
 
 
 def _count(c, claim, most):

@@ -10,8 +10,17 @@ RULES = {
     "closed-form": {"period": 1},
     "real-segment": {},
     "preperiodic": {"preperiod": 2, "period": 2},
+    "exterior-disc": {"centre": ["-0x3p-2", "0x1p-3"], "index": 30, "bits": 64},
+    "interior-disc": {"centre": ["0x0p0", "0x0p0"], "period": 1, "bits": 64,
+                      "disc": {"centre": ["0x0p0", "0x0p0"], "radius": "0x1p-40"}},
+    "isolated-root": {"bits": 64},
+    "witnesses": {"witnesses": [{
+        "claim": "misiurewicz", "preperiod": 2, "period": 1, "by": {"rule": "isolated-root", "bits": 64},
+        "region": {"disc": {"centre": ["-0x1p1", "0x0p0"], "radius": "0x1p-10"}}}]},
+    "quarters": {"quarters": [{"rule": "closed-form", "period": 1}] * 4},
 }
-CLAIMS = ("outside", "count", "inside", "member")
+CLAIMS = ("outside", "count", "inside", "member", "straddles", "nucleus", "misiurewicz")
+OF_CLAIM = {"count": ("bailout", "index"), "nucleus": ("period",), "misiurewicz": ("preperiod", "period")}
 
 
 def dyadic_text(value):
@@ -23,11 +32,13 @@ def dyadic_text(value):
     return f"{'-' if value < 0 else ''}0x{mantissa:x}p{exponent}"
 
 
-def _altered_dyadic(text, draw):
+def _value_of(text):
     sign, digits, exponent = re.fullmatch(r"(-?)0x([0-9a-f]+)p(-?[0-9]+)", text).groups()
-    exponent = int(exponent)
-    value = int(digits, 16) * F(2) ** exponent * (-1 if sign else 1)
-    unit = F(2) ** exponent
+    return int(digits, 16) * F(2) ** int(exponent) * (-1 if sign else 1)
+
+
+def _altered_dyadic(text, draw):
+    value, unit = _value_of(text), F(2) ** int(text.partition("p")[2])
     changes = [value + unit, value - unit, -value, value * 2, value / 2, value * 3, value * F(9, 8), value * F(7, 8),
                value + unit * F(2) ** -draw.randrange(1, 60), value - unit * F(2) ** -draw.randrange(1, 60), F(0)]
     return dyadic_text(draw.choice(changes))
@@ -79,10 +90,15 @@ def _alter_leaf(claim, draw):
 
 
 def _swap_coordinates(claim, draw):
-    (_, region), = claim["region"].items()
-    pairs = [region["centre"] if isinstance(region, dict) else region]
+    (kind, region), = claim["region"].items()
+    if kind == "box":
+        region["re"], region["im"] = region["im"], region["re"]
+        return
+    pairs = [region["centre"] if kind == "disc" else region]
     if "disc" in claim["by"]:
         pairs.append(claim["by"]["disc"]["centre"])
+    if "centre" in claim["by"]:
+        pairs.append(claim["by"]["centre"])
     draw.choice(pairs).reverse()
 
 
@@ -94,10 +110,12 @@ def _swap_rule(claim, draw):
 
 
 def _swap_statement(claim, draw):
-    if claim.pop("claim") == "count":
-        claim["by"]["index"] = claim.pop("index")
-        del claim["bailout"]
+    if claim["claim"] == "count":
+        claim["by"]["index"] = claim["index"]
+    had = {key: claim.pop(key) for key in OF_CLAIM.get(claim["claim"], ())}
     claim["claim"] = draw.choice(CLAIMS)
+    usual = {"bailout": "0x1p1", "index": 33, "preperiod": 2, "period": 1}
+    claim.update({key: had.get(key, usual[key]) for key in OF_CLAIM.get(claim["claim"], ())})
 
 
 def _swap_bailout(claim, draw):
@@ -110,10 +128,35 @@ def _widen_region(claim, draw):
     radius = dyadic_text(F(2) ** -draw.randrange(1, 70))
     if kind == "disc":
         value["radius"] = radius
+    elif kind == "box":
+        side, end = value[draw.choice(["re", "im"])], draw.randrange(2)
+        side[end] = dyadic_text(_value_of(side[end]) + (1 if end else -1) * _value_of(radius))
     else:
         coarse = [F(round(F(x) * 2**40), 2**40) for x in value] if kind == "point" else [F(0), F(0)]
         claim["region"] = {"disc": {"centre": [dyadic_text(x) for x in coarse], "radius": radius}}
     claim.pop("request", None)
+
+
+def _rearrange_parts(claim, draw):
+    """Quarters or witnesses exchanged, one put for another or left out."""
+    parts = claim["by"].get("quarters") or claim["by"].get("witnesses")
+    if not parts:
+        return
+    a, b = draw.randrange(len(parts)), draw.randrange(len(parts))
+    action = draw.randrange(5)
+    if action < 3:
+        parts[a], parts[b] = parts[b], parts[a]
+    elif action < 4:
+        parts[a] = copy.deepcopy(parts[b])
+    else:
+        del parts[a]
+
+
+def _move_witness(claim, draw):
+    """The region of a witness for that of the claim, or the reverse."""
+    witness = draw.choice(claim["by"].get("witnesses", [claim]))
+    a, b = draw.sample([claim, witness], 2)
+    a["region"] = copy.deepcopy(b["region"])
 
 
 def _drop_or_add_key(claim, draw):
@@ -125,8 +168,8 @@ def _drop_or_add_key(claim, draw):
 
 
 # How often each is tried.
-OPERATORS = [_alter_leaf] * 12 + [_widen_region] * 3 + [_swap_coordinates, _swap_rule, _swap_statement, _swap_bailout,
-                                                          _drop_or_add_key]
+OPERATORS = [_alter_leaf] * 12 + [_widen_region] * 3 + [
+    _swap_coordinates, _swap_rule, _swap_statement, _swap_bailout, _rearrange_parts, _move_witness, _drop_or_add_key]
 
 
 def mutant(claim, draw):

@@ -114,3 +114,79 @@ def _where_the_index_falls_below(n, bailout):
         else:
             slow = middle
     return fast
+
+
+def _hair(draw, least=4, most=60):
+    return F(1, 2 ** draw.randrange(least, most))
+
+
+def _disc_region(x, y, radius):
+    """With the radius cut off to 80 places, which the caller's margin covers."""
+    return {"disc": {"centre": [dyadic_text(x), dyadic_text(y)], "radius": dyadic_text(F(int(radius * 2**80), 2**80))}}
+
+
+def discs_about_the_tip(draw):
+    """(false claim, true claim) by exterior discs about a real c < -2, whose distance to M is exactly -2 - c.
+
+    A disc that a univalent map covers has a quarter of the distance to what it omits (Koebe; P. Duren, Univalent
+    Functions, 1983; memory), and Lemma U1's has it too since |a2| <= 2; the bounds of the tail take away less than 1 %.
+    """
+    distance = F(draw.randrange(1, 2**6), 2**draw.randrange(10, 40))
+    c = -2 - distance
+    index = exact_oracle.escape_index((c, F(0)), F(1025), 400)
+    by = {"rule": "exterior-disc", "centre": [dyadic_text(c), "0x0p0"], "index": index + draw.randrange(2),
+          "bits": draw.choice([96, 128, 256])}
+
+    def claim(radius):
+        return {"claim": "outside", "region": _disc_region(c, F(0), radius), "by": by}
+
+    return claim(distance * (1 + _hair(draw, 1, 30))), claim(distance / 4 * F(99, 100))
+
+
+def discs_in_the_circle(draw):
+    """The same in the disc of period 2, whose rim is |c + 1| = 1/4: at real c, where a point of the cycle is real."""
+    shift = F(draw.randrange(-200, 200), 1024)
+    c, distance = -1 + shift, F(1, 4) - abs(shift)
+    bits = 300
+    root = isqrt(((-3 - 4 * c) * 4**bits).__floor__())
+    cycle = {"centre": [dyadic_text(F((root - 2**bits) >> 221, 2**80)), "0x0p0"],
+             "radius": dyadic_text(F(1, 2 ** draw.randrange(32, 70)))}
+    by = {"rule": "interior-disc", "centre": [dyadic_text(c), "0x0p0"], "period": 2, "disc": cycle, "bits": 128}
+
+    def claim(radius):
+        return {"claim": "inside", "region": _disc_region(c, F(0), radius), "by": by}
+
+    return claim(distance * (1 + _hair(draw, 1, 30))), claim(distance / 4 * F(99, 100))
+
+
+# Real roots, each the only one between its bounds: of c³ + 2c² + c + 1, the nucleus of period 3 (OEIS A109134, negated;
+# verified); of c³ + 2c² + 2c + 2, the Misiurewicz point with z_3 fixed (OEIS A256099, negated; verified).
+_ROOTS = (
+    ({"claim": "nucleus", "period": 3}, (1, 2, 1, 1)),
+    ({"claim": "misiurewicz", "preperiod": 3, "period": 1}, (1, 2, 2, 2)),
+)
+
+
+def _real_root(polynomial):
+    """The root between -2 and -1 to within 2^-150: the polynomial is negative at -2 and positive at -1."""
+    lo, hi = F(-2), F(-1)
+    while hi - lo > F(1, 2**150):
+        middle = (lo + hi) / 2
+        value = F(0)
+        for coefficient in polynomial:
+            value = value * middle + coefficient
+        lo, hi = (middle, hi) if value < 0 else (lo, middle)
+    return lo
+
+
+def discs_beside_a_root(draw):
+    """(false claim, true claim): a disc that ends a hair before the root, and one that holds it, not at its centre."""
+    statement, polynomial = draw.choice(_ROOTS)
+    root, radius = _real_root(polynomial), F(1, 2 ** draw.randrange(8, 60))
+    by = {"rule": "isolated-root", "bits": 192}
+
+    def claim(shift):
+        centre = F(int((root + shift) * 2**140), 2**140)
+        return {**statement, "region": _disc_region(centre, F(0), radius), "by": by}
+
+    return claim(radius * (1 + _hair(draw)) * draw.choice([1, -1])), claim(radius * F(draw.randrange(-32, 33), 64))

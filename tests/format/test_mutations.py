@@ -99,9 +99,13 @@ class Mutations(unittest.TestCase):
         return established, false
 
     def assert_period(self, claim):
-        if claim["by"]["rule"] == "attracting-disc" and "point" in claim["region"]:
+        by, c = claim["by"], None
+        if by["rule"] == "attracting-disc" and "point" in claim["region"]:
             c = exact_oracle.samples(claim["region"])[0]
-            self.assertIn(exact_oracle.attracting_period(c, MOST_STEPS), (claim["by"]["period"], None))
+        elif by["rule"] == "interior-disc":
+            c = tuple(map(exact_oracle.number, by["centre"]))
+        if c:
+            self.assertIn(exact_oracle.attracting_period(c, MOST_STEPS), (by["period"], None))
 
     def test_altered_claims(self):
         base = base_claims()
@@ -162,6 +166,15 @@ class Mutations(unittest.TestCase):
 
     def test_segments_that_fail_to_second_order(self):
         self.assert_only_the_second(near_misses.segments_to_second_order)
+
+    def test_exterior_discs_that_reach_the_tip(self):
+        self.assert_only_the_second(near_misses.discs_about_the_tip)
+
+    def test_interior_discs_that_reach_the_circle(self):
+        self.assert_only_the_second(near_misses.discs_in_the_circle)
+
+    def test_discs_beside_a_nucleus_or_a_misiurewicz_point(self):
+        self.assert_only_the_second(near_misses.discs_beside_a_root)
 
     def assert_only_the_second(self, pair):
         """Of many pairs of claims drawn."""

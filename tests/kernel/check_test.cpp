@@ -57,6 +57,33 @@ TEST_CASE("a rule establishes only the statements that its lemma is about") {
   CHECK_FALSE(holds(count, tip, preperiodic));
 }
 
+TEST_CASE("a disc or a root establishes no statement but its own") {
+  // each rule at a place where its own inequality holds, first with the statement that it is for
+  const ComplexDyadic one = reference::to_dyadic(Complex{1, 0}), minus_one = reference::to_dyadic(Complex{-1, 0});
+  const AttractingDisc cycle{2, {{}, Dyadic(0x1p-20)}, 128};
+  const Region tip = claims::disc({-2, 0}, ratio(1, 16));
+  struct Fitting {
+    Region region;
+    Rule by;
+    Statement own;
+  };
+  const std::vector<Statement> all = {Outside{},   Inside{},   Member{},         Count{Dyadic(2.0), 3},
+                                      Straddles{}, Nucleus{2}, Misiurewicz{2, 1}};
+  for (const Fitting& f :
+       {Fitting{point({1, 0}), ExteriorDisc{one, 6, 128}, Outside{}},
+        Fitting{point({-1, 0}), InteriorDisc{minus_one, cycle}, Inside{}},
+        Fitting{claims::disc({-1, 0}, ratio(1, 16)), IsolatedRoot{64}, Nucleus{2}},
+        Fitting{tip, IsolatedRoot{64}, Misiurewicz{2, 1}},
+        Fitting{tip, Witnesses{{claims::claim(Misiurewicz{2, 1}, tip, IsolatedRoot{64})}}, Straddles{}},
+        Fitting{claims::box({3, 3}, {4, 4}), Quarters{std::vector<Rule>(4, Escape{1, 64})}, Outside{}},
+        Fitting{claims::box({0, 0}, {ratio(1, 8), ratio(1, 8)}), Quarters{std::vector<Rule>(4, ClosedForm{1})},
+                Inside{}}})
+    for (const Statement& statement : all) {
+      INFO("rule " << f.by.index() << ", statement " << statement.index());
+      CHECK(established(claims::claim(statement, f.region, f.by)) == (statement == f.own));
+    }
+}
+
 TEST_CASE("a bailout below 2 or above 2^60 and an index of 0 are refused") {
   // with bailout 1 the count 2 of c = -1.1 would be "established" and nothing would follow from it
   const auto count = [](const mpq_class& bailout, std::uint64_t index, const Complex& c) {
@@ -132,6 +159,40 @@ TEST_CASE("the region must contain the request, exactly") {
   CHECK(established(with_request(along, "-1/2")));
   CHECK(refused(with_request(along, "1/8")));
   CHECK(refused(with_request(along, "-1/2+1e-300i")));
+}
+
+TEST_CASE("a request may be a box or a disc, which the region must contain as a whole") {
+  const Claim about = claims::outside(claims::disc({3, 0}, ratio(1, 2)), 1, 64);
+  for (const char* within : {"disc 3 1/2", "disc 3 0.4999", "disc 3+1/4i 1/4", "box 2.7-0.4i 3.3+0.4i"})
+    CHECK(established(with_request(about, within)));
+  for (const char* beyond :
+       {"box 3,0 3.5,1e-9", "disc 3 0.5000001", "disc 3+1e-300i 1/2", "box 2.7-0.4i 3.3+0.4001i", "disc 3 8"})
+    CHECK(refused(with_request(about, beyond)));
+  const Claim over =
+      claims::claim(Inside{}, claims::box({ratio(-1, 8), ratio(-1, 8)}, {ratio(1, 8), ratio(1, 8)}), ClosedForm{1});
+  for (const char* within : {"box -1/8-1/8i 1/8+1/8i", "box -1/8+1/8i 1/8-1/8i", "disc 0 1/8", "0.125-0.125i"})
+    CHECK(established(with_request(over, within)));
+  for (const char* beyond : {"box -1/8-1/8i 1/8+0.126i", "disc 0 0.126", "disc 1e-300 1/8", "box -1-i 1+i"})
+    CHECK(refused(with_request(over, beyond)));
+  for (const char* unread : {"box 0 0", "disc 0 -1", "box 0", "disc 0 1 2", "box 0 1+i,"})
+    CHECK(refused(with_request(over, unread)));
+}
+
+TEST_CASE("what is in the region must be in the request, so the request contains the region") {
+  const Claim nucleus = claims::claim(Nucleus{2}, claims::disc({-1, 0}, ratio(1, 16)), IsolatedRoot{64}),
+              tip = claims::claim(Misiurewicz{2, 1}, claims::disc({-2, 0}, ratio(1, 16)), IsolatedRoot{64}),
+              boundary = claims::claim(Straddles{}, claims::disc({-2, 0}, ratio(1, 16)), Witnesses{{tip}});
+  CHECK(established(with_request(nucleus, "disc -1 1/16")));
+  CHECK(established(with_request(nucleus, "box -2-i 0+i")));
+  for (const char* smaller : {"disc -1 1/32", "-1", "disc -1+1e-300i 1/16", "box -1-i 0+i", "disc -1 0.0624999"})
+    CHECK(refused(with_request(nucleus, smaller)));
+  for (const Claim& claim : {tip, boundary}) {
+    CHECK(established(with_request(claim, "disc -2 1/16")));
+    CHECK(established(with_request(claim, "disc -2 1")));
+    CHECK(established(with_request(claim, "box -2.0625-0.0625i -1.9375+0.0625i")));
+    for (const char* smaller : {"-2", "disc -2 1/17", "box -2.0625-0.0625i -1.9375+0.0624i", "disc -2+1e-300 1/16"})
+      CHECK(refused(with_request(claim, smaller)));
+  }
 }
 
 TEST_CASE("numbers that are not finite, or far larger than certificates admit, are refused") {

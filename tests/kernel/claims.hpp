@@ -19,6 +19,10 @@ inline Region segment(const mpq_class& lo, const mpq_class& hi) {
   return merestone::Segment{reference::to_dyadic(lo), reference::to_dyadic(hi)};
 }
 
+inline Region box(const Complex& lo, const Complex& hi) {
+  return merestone::Box{reference::to_dyadic(lo), reference::to_dyadic(hi)};
+}
+
 inline Claim claim(const Statement& statement, const Region& region, const Rule& by) {
   return {statement, region, std::nullopt, by};
 }

@@ -23,7 +23,9 @@ from pathlib import Path
 
 import mutants_discs
 import mutants_lanes
+import mutants_regions
 import mutants_rules
+import mutants_safe_discs
 
 ROOMS = ["kernel", "lanes", "search"]
 LONGEST_RUN = 1800  # seconds; the tests of a room take less than one minute
@@ -49,7 +51,7 @@ class Mutant:
 
 
 def all_mutants():
-    for module in (mutants_discs, mutants_rules, mutants_lanes):
+    for module in (mutants_discs, mutants_rules, mutants_regions, mutants_safe_discs, mutants_lanes):
         for file, mutants in module.MUTANTS.items():
             for what, *texts in mutants:
                 yield Mutant(file, what, list(zip(texts[::2], texts[1::2], strict=True)))

@@ -135,11 +135,14 @@ MUTANTS = {
          "  midpoint_modulus_upper(modulus, z_);\n"),
         ("remainder: the next derivative for the present one",
          "    advance_remainder();\n"
-         "    multiply(d_, z_, d_, bits_);\n",
-         "    multiply(d_, z_, d_, bits_);\n"
+         "    advance_derivative(d_, z_, bits_);\n",
+         "    advance_derivative(d_, z_, bits_);\n"
          "    advance_remainder();\n"),
         ("derivative: + 1 dropped",
-         "    add(d_, d_, one, bits_);\n",
+         "  add(derivative, derivative, one, bits);\n",
+         ""),
+        ("derivative: z z' for 2 z z'",
+         "  twice(derivative, derivative);\n",
          ""),
         ("range: the region's radius dropped",
          "  mag_addmul(all.radius, slope, spread_);\n",
@@ -150,9 +153,14 @@ MUTANTS = {
         ("range: |D| without its radius",
          "  modulus_upper(slope, d_);\n",
          "  midpoint_modulus_upper(slope, d_);\n"),
-        ("segment: a quarter of its length for half",
-         "    modulus_upper(spread, half_length);\n",
-         "    modulus_upper(spread, half_length);\n"
-         "    mag_mul_2exp_si(spread, spread, -1);\n"),
+        ("box: a quarter of its height for half",
+         "arf_get_mag(half_height, (box.hi.im - box.lo.im).shifted(-1).raw())",
+         "arf_get_mag(half_height, (box.hi.im - box.lo.im).shifted(-2).raw())"),
+        ("box: a quarter of its width for half",
+         "arf_get_mag(spread, (box.hi.re - box.lo.re).shifted(-1).raw())",
+         "arf_get_mag(spread, (box.hi.re - box.lo.re).shifted(-2).raw())"),
+        ("box: half its longer side for half its diagonal",
+         "    mag_hypot(spread, spread, half_height);\n",
+         "    mag_max(spread, spread, half_height);\n"),
     ],
 }

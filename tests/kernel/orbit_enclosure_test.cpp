@@ -93,6 +93,36 @@ TEST_CASE("the enclosure over a segment holds the exact orbits of its points") {
   }
 }
 
+TEST_CASE("the enclosure over a box holds the exact orbits of its corners and of what lies between") {
+  reference::PointSource source(406);
+  for (std::uint64_t k = 0; k < reference::repeats(800); ++k) {
+    const Complex lo = short_parameter(source);
+    const mpq_class width = source.dyadic(5, source.between(-20, -1)),
+                    height = source.dyadic(5, source.between(-20, -1));
+    std::vector<Complex> parameters;
+    for (const long s : {0, 5, 16})
+      for (const long t : {0, 8, 16}) parameters.push_back({lo.re + width * s / 16, lo.im + height * t / 16});
+    const Box box{to_dyadic(lo), to_dyadic(lo + Complex{width, height})};
+    follow(OrbitEnclosure(box, samples::any_bits(source)), parameters,
+           std::vector<Complex>(parameters.size(), Complex{0, 0}), 6);
+  }
+}
+
+TEST_CASE("the slope at the centre holds the exact derivative") {
+  reference::PointSource source(407);
+  for (std::uint64_t k = 0; k < reference::repeats(300); ++k) {
+    const Complex centre = short_parameter(source);
+    OrbitEnclosure orbit(Disc{to_dyadic(centre), to_dyadic(power_of_two(-30))}, samples::any_bits(source));
+    Complex z{0, 0}, slope{0, 0};
+    for (int n = 1; n <= 8 && orbit.step(); ++n) {
+      slope = mpq_class(2) * (z * slope) + Complex{1, 0};
+      z = z * z + centre;
+      REQUIRE(holds(orbit.slope_at_centre(), slope));
+      REQUIRE(holds(orbit.at_centre(), z));
+    }
+  }
+}
+
 TEST_CASE("the enclosure at a point holds the exact orbit") {
   reference::PointSource source(404);
   for (std::uint64_t k = 0; k < reference::repeats(500); ++k) {

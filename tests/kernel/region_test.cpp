@@ -1,4 +1,4 @@
-// Exact numbers and regions against GMP (computed) and by hand.
+// Exact numbers, prime cofactors and the quarters and boxes of regions against GMP (computed) and by hand.
 
 #include "kernel/region.hpp"
 #include "catch.hpp"
@@ -47,53 +47,57 @@ TEST_CASE("dyadic numbers keep every bit") {
   CHECK(Dyadic(-0x1p-1074).sign() == -1);
 }
 
-TEST_CASE("a point contains itself and nothing else") {
-  const Region point = Point{{Rational(1, 3), Rational(-2, 7)}};
-  CHECK(contains(point, {Rational(1, 3), Rational(-2, 7)}));
-  CHECK_FALSE(contains(point, {Rational(1, 3), Rational(2, 7)}));
-  CHECK_FALSE(contains(point, {Rational(333333333, 1000000000), Rational(-2, 7)}));
+namespace {
+
+Box any_box(reference::PointSource& source) {
+  const Complex lo{source.any_dyadic(), source.any_dyadic()};
+  const mpq_class width = source.dyadic(9, source.between(-300, 4)), height = source.dyadic(9, source.between(-300, 4));
+  return {to_dyadic(lo), to_dyadic(Complex{lo.re + width, lo.im + height})};
 }
 
-TEST_CASE("a segment contains its ends and nothing off the axis") {
-  const Region segment = Segment{Dyadic(-1.5), Dyadic(0.25)};
-  for (const mpq_class& x : {ratio(-3, 2), ratio(1, 4), ratio(-1, 3)}) CHECK(contains(segment, to_rational({x, 0})));
-  const mpq_class least = reference::power_of_two(-300);
-  for (const Complex& c :
-       {Complex{ratio(-3, 2) - least, 0}, Complex{ratio(1, 4) + least, 0}, Complex{0, least}, Complex{0, -least}})
-    CHECK_FALSE(contains(segment, to_rational(c)));
+bool holds(const Box& box, const Complex& z) {
+  return exact(box.lo.re) <= z.re && z.re <= exact(box.hi.re) && exact(box.lo.im) <= z.im && z.im <= exact(box.hi.im);
 }
 
-TEST_CASE("a disc contains its rim and nothing beyond it") {
-  reference::PointSource source(303);
-  for (std::uint64_t k = 0; k < reference::repeats(2000); ++k) {
-    const Complex centre{source.any_dyadic(), source.any_dyadic()};
-    const mpq_class radius = abs(source.any_dyadic());
-    const Region disc = Disc{to_dyadic(centre), to_dyadic(radius)};
-    const Complex unit = source.direction();
-    const mpq_class least = reference::power_of_two(-500);
-    REQUIRE(contains(disc, to_rational(centre + radius * unit)));
-    REQUIRE_FALSE(contains(disc, to_rational(centre + (radius + least) * unit)));
+}  // namespace
+
+TEST_CASE("the quarters of a box cover it, meet in its centre and have a corner each") {
+  reference::PointSource source(304);
+  for (std::uint64_t k = 0; k < reference::repeats(500); ++k) {
+    const Box box = any_box(source);
+    const Complex lo = exact(box.lo), hi = exact(box.hi), middle = ratio(1, 2) * (lo + hi);
+    REQUIRE(exact(centre_of(box)) == middle);
+    const auto quarters = quarters_of(box);
+    const std::vector<Complex> corners = {lo, {hi.re, lo.im}, {lo.re, hi.im}, hi};
+    for (std::size_t i = 0; i < 4; ++i) {
+      REQUIRE(holds(quarters[i], corners[i]));
+      REQUIRE(holds(quarters[i], middle));
+      const Complex size = exact(quarters[i].hi) - exact(quarters[i].lo);
+      REQUIRE(mpq_class(2) * size == hi - lo);
+      REQUIRE((holds(box, exact(quarters[i].lo)) && holds(box, exact(quarters[i].hi))));
+    }
+    for (int i = 0; i < 8; ++i) {
+      const mpq_class s = ratio(source.between(0, 48), 48), t = ratio(source.between(0, 48), 48);
+      const Complex z{lo.re + s * (hi.re - lo.re), lo.im + t * (hi.im - lo.im)};
+      REQUIRE((holds(quarters[0], z) || holds(quarters[1], z) || holds(quarters[2], z) || holds(quarters[3], z)));
+    }
   }
-  CHECK_FALSE(contains(Region(Disc{{Dyadic(), Dyadic()}, Dyadic(0.5)}), {Rational(1, 2), Rational(1, 2)}));
-  CHECK_FALSE(contains(Region(Disc{{Dyadic(), Dyadic()}, Dyadic(2.0)}), {Rational(2), Rational(2)}));
 }
 
-TEST_CASE("the bounding rectangle touches the region on four sides") {
-  const Rectangle disc = bounding_rectangle(Disc{{Dyadic(-1.0), Dyadic(0.5)}, Dyadic(0.125)});
-  CHECK(disc.x_lo == Rational(-9, 8));
-  CHECK(disc.x_hi == Rational(-7, 8));
-  CHECK(disc.y_lo == Rational(3, 8));
-  CHECK(disc.y_hi == Rational(5, 8));
-  const Rectangle segment = bounding_rectangle(Segment{Dyadic(-2.0), Dyadic(0.25)});
-  CHECK(segment.x_lo == Rational(-2));
-  CHECK(segment.x_hi == Rational(1, 4));
-  CHECK(segment.y_lo == Rational(0));
-  CHECK(segment.y_hi == Rational(0));
-  const Rectangle point = bounding_rectangle(Point{{Rational(1, 3), Rational(-1, 7)}});
-  CHECK(point.x_lo == Rational(1, 3));
-  CHECK(point.x_hi == Rational(1, 3));
-  CHECK(point.y_lo == Rational(-1, 7));
-  CHECK(point.y_hi == Rational(-1, 7));
+TEST_CASE("the bounding box of a region is exact") {
+  reference::PointSource source(305);
+  for (std::uint64_t k = 0; k < reference::repeats(500); ++k) {
+    const Complex centre{source.any_dyadic(), source.any_dyadic()};
+    const mpq_class radius = source.dyadic(20, source.between(-300, 4));
+    const Box around = bounding_box(Disc{to_dyadic(centre), to_dyadic(radius)});
+    REQUIRE(exact(around.lo) == centre - Complex{radius, radius});
+    REQUIRE(exact(around.hi) == centre + Complex{radius, radius});
+    const Box along = bounding_box(Segment{to_dyadic(centre.re), to_dyadic(centre.re + radius)});
+    REQUIRE(exact(along.lo) == Complex{centre.re, 0});
+    REQUIRE(exact(along.hi) == Complex{centre.re + radius, 0});
+    const Box box = any_box(source);
+    REQUIRE(bounding_box(box) == box);
+  }
 }
 
 TEST_CASE("every proper divisor divides one of the proper prime cofactors") {

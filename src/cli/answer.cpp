@@ -93,10 +93,11 @@ std::string limit_in_words(const Undecided& undecided) {
 }
 
 std::string answer_line(const Answer& answer) {
+  const Proof* proof = answer.proof();
   const std::string reason = answer.failure() != nullptr     ? answer.failure()->message
                              : answer.undecided() != nullptr ? limit_in_words(*answer.undecided())
-                                                             : answer.region                 ? region_reason_in_words(*answer.proof())
-                                                             : reason_in_words(*answer.proof());
+                             : answer.region                 ? region_reason_in_words(*proof)
+                                                             : reason_in_words(*proof);
   return fmt::format("{}  {}: {}", shortened(answer.asked.text, kLongestShownPoint), verdict_word(answer), reason);
 }
 

@@ -56,7 +56,7 @@ void add_proof(Json& json, const Answer& answer, const Proof& proof) {
     json["index"] = count->index;
     json["bailout"] = spell(count->bailout);
   }
-  add_rule(json, proof.by);
+  add_rule(json, answer.region && answer.claim ? answer.claim->by : proof.by);
   if (std::holds_alternative<Member>(proof.statement)) json["why"] = reason_in_words(proof);
   if (answer.region || !std::holds_alternative<Inside>(proof.statement)) return;
   const auto cycle = enclose_cycle(answer.c, proof.by, kMostCyclePoints);

@@ -5,6 +5,7 @@
 #include <algorithm>
 #include <limits>
 
+#include "cli/region_words.hpp"
 #include "format/shown.hpp"
 #include "kernel/typed_number.hpp"
 #include "kernel/typed_region.hpp"
@@ -31,14 +32,15 @@ void certify_or_withdraw(Answer& answer, const DecideOptions& options) {
   answer.claim = answer.region ? certify(*answer.region, answer.asked.text, *proof, limits)
                                : certify(answer.c, answer.asked.text, *proof, limits);
   if (answer.claim) return;
-  fmt::print(stderr, "merestone: {}: search and kernel disagree, which is a defect of the program; please report this input\n",
+  fmt::print(stderr, "merestone: {}: search and kernel disagree, a defect of the program; please report this input\n",
              shown(answer.asked.text));
   answer.said = Verdict(Undecided{Limit::precision, 0, limits.bits});
 }
 
 Answer about_region(const PointLine& asked, const DecideOptions& options) {
   const Result<Shape> region = parse_region(asked.text);
-  if (!region) return {asked, {}, std::nullopt, region.failure(), std::nullopt};
+  if (!region)
+    return {asked, {}, std::nullopt, fault_of_region(asked.text, region.failure()), std::nullopt};
   RegionVerdict found = decide_region(*region, options);
   Answer answer{asked, {}, std::move(found.region), std::move(found.verdict), std::nullopt};
   certify_or_withdraw(answer, options);

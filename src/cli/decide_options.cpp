@@ -15,16 +15,16 @@ constexpr const char* kFooter = R"(Examples:
   merestone-check list.mere.json
       what the colleague runs: it establishes every claim anew
   merestone decide --box -0.76+0.09i -0.74+0.11i
-      every parameter of a box; it straddles if it has a proved member and a proved outsider
+      every parameter of a box; it straddles where it has both a member of M and a parameter outside
   merestone decide --disc 0.26 0.005 --rules elementary
-      a disc, by its centre and radius, with nothing but arithmetic and attracting cycles
+      a disc, by its centre and radius; proved by arithmetic and attracting cycles only
   merestone decide --expect outside 0.2501 && echo "it is outside"
       for scripts: the exit code is the answer
   some-program | merestone decide --points - --json
-      a JSON object a line, as soon as a point is decided
+      a JSON object a line, as soon as a parameter or region is decided
 
 Verdicts:
-  outside     not in M; with the proved escape index
+  outside     not in M; for a parameter, and where a region has one, with the proved escape index
   inside      in the interior of M; with the period of the attracting cycle
   member      in M; why, and whether it is known to lie on the boundary
   straddles   the region contains boundary points of M; with the witnesses that prove it
@@ -33,7 +33,7 @@ Verdicts:
 Exit codes:
   0  everything asked was proved, and is as expected
   1  something is proved to be other than expected
-  2  usage, or a malformed parameter
+  2  usage, or a malformed parameter or region
   3  something is undecided within the limits
   4  a file could not be read or written
 )";
@@ -42,9 +42,11 @@ void add_input(CLI::App& command, DecideWords& words) {
   command.add_option("point", words.points, "Parameters: decimals, fractions or dyadics of any length, as a+bi or a,b")
       ->type_name("POINT");
   command.add_option("--box", words.boxes, "The box between two opposite corners; may be given again")
-      ->type_name("A B");
+      ->type_name("CORNER CORNER")
+      ->allow_extra_args(false);
   command.add_option("--disc", words.discs, "The disc about a centre, and its radius; may be given again")
-      ->type_name("C R");
+      ->type_name("CENTRE RADIUS")
+      ->allow_extra_args(false);
   command
       .add_option("--points,--regions", words.list,
                   "File with a parameter, box A B or disc C R on each line, or - for standard input")
@@ -52,7 +54,9 @@ void add_input(CLI::App& command, DecideWords& words) {
 }
 
 void add_limits(CLI::App& command, DecideWords& words) {
-  command.add_option("--bailout", words.bailout, "Radius for which the escape index is proved, from 2 to 2^60")
+  command
+      .add_option("--bailout", words.bailout,
+                  "Radius for which the escape index of a parameter is proved, from 2 to 2^60; of a region it is 2")
       ->type_name("RADIUS")
       ->capture_default_str();
   command.add_option("--iterations", words.limits.iterations, "Most steps of an orbit")
@@ -76,14 +80,14 @@ void add_rules(CLI::App& command, DecideWords& words) {
       ->capture_default_str();
   command
       .add_option("--rules", words.rules,
-                  "elementary: for regions only rules that rest on arithmetic and attracting cycles, not on the theory of "
-                  "univalent functions")
+                  "elementary: regions are decided without the theory of univalent functions, by arithmetic and "
+                  "attracting cycles only")
       ->check(CLI::IsMember({"all", "elementary"}))
       ->capture_default_str();
 }
 
 void add_output(CLI::App& command, DecideWords& words) {
-  command.add_option("--expect", words.expect, "Exit with 1 where a parameter or region is proved to be other than this")
+  command.add_option("--expect", words.expect, "Exit with 1 where something is proved to be other than this")
       ->check(CLI::IsMember({"outside", "inside", "member", "straddles"}));
   command.add_option("--out", words.out,
                      "Write a certificate: NAME.mere.json (up to 10,000 claims) or NAME.mere (any number)")
@@ -112,7 +116,7 @@ Result<Dyadic> read_bailout(const std::string& text) {
 
 CLI::App* add_decide_command(CLI::App& program, DecideWords& words) {
   CLI::App* command = program.add_subcommand(
-      "decide", "Prove of parameters and regions that they lie outside the Mandelbrot set M, inside, are members, or straddle its boundary");
+      "decide", "Prove where parameters and regions lie: outside the Mandelbrot set M, inside, or across its boundary");
   add_input(*command, words);
   add_limits(*command, words);
   add_rules(*command, words);
@@ -124,8 +128,9 @@ CLI::App* add_decide_command(CLI::App& program, DecideWords& words) {
 Result<DecideRequest> read_decide_words(const DecideWords& words) {
   const bool has_typed = !words.points.empty() || !words.boxes.empty() || !words.discs.empty();
   if (has_typed != words.list.empty())
-    return Failure{words.list.empty() ? "decide: no parameter was given; write one, such as -0.75+0.1i, a --box, a --disc or --points FILE"
-                                      : "decide: give parameters and regions, or --points, not both"};
+    return Failure{words.list.empty()
+                       ? "decide: nothing was given; write a parameter such as -0.75+0.1i, or --box, --disc, --points"
+                       : "decide: give parameters and regions, or --points, not both"};
   if (!words.out.empty())
     if (auto problem = check_certificate_name(words.out)) return *problem;
   const Result<Dyadic> bailout = read_bailout(words.bailout);

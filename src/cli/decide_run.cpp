@@ -84,8 +84,9 @@ void DecideRun::render(const Answer& answer, Reply& reply) const {
   if (words_.json)
     reply.out += answer_json(answer) + "\n";
   else if (const Failure* failure = answer.failure())
-    reply.err += points_.is_list() ? fmt::format("merestone: {}:{}: {}\n", words_.list, answer.asked.line, failure->message)
-                                   : fmt::format("merestone: {}\n", failure->message);
+    reply.err += points_.is_list()
+                     ? fmt::format("merestone: {}:{}: {}\n", words_.list, answer.asked.line, failure->message)
+                     : fmt::format("merestone: {}\n", failure->message);
   else if (!words_.quiet)
     reply.out += points_.is_list() ? answer_line(answer) + "\n" : answer_paragraph(answer);
   if (file_ && answer.claim) reply.claims.push_back(to_json(*answer.claim));
@@ -129,7 +130,8 @@ void DecideRun::print(Reply reply) {
   for (nlohmann::json& claim : reply.claims)
     if (auto problem = file_->add(std::move(claim))) return fail(ExitCode::io_failed, problem->message);
   if (points_.is_list() && tally_.errors() > kMostErrors)
-    fail(ExitCode::malformed, words_.list + ": more than 1,000 malformed lines; give a text file with one parameter a line");
+    fail(ExitCode::malformed,
+         words_.list + ": more than 1,000 malformed lines; give a text file with one parameter or region a line");
 }
 
 void DecideRun::finish_certificate() {
@@ -151,7 +153,7 @@ void DecideRun::finish() {
   if (Interruption::signal() != 0)
     fmt::print(stderr, "merestone: interrupted; the answers up to here are complete\n");
   else if (tally_.all() == 0 && code_ == ExitCode::established)
-    return fail(ExitCode::malformed, words_.list + ": holds no parameter; write one a line, such as -0.75+0.1i");
+    return fail(ExitCode::malformed, words_.list + ": holds no parameter and no region; write one a line, such as -0.75+0.1i");
   if (points_.is_list() && !words_.json && !words_.quiet) output_.write(tally_.in_words() + "\n");
   if (file_) finish_certificate();
   if (output_.failed()) fail(ExitCode::io_failed, "standard output cannot be written");

@@ -1,6 +1,7 @@
 #include "cli/locate_options.hpp"
 
 #include "cli/decide_certificate.hpp"
+#include "cli/region_words.hpp"
 #include "cli/shared_arguments.hpp"
 #include "kernel/typed_region.hpp"
 
@@ -18,17 +19,19 @@ constexpr const char* kFooter = R"(Examples:
   merestone locate --disc i 1e-30 --digits 60 --out place.mere.json
       a deep place, quoted with 60 proved decimals, and the certificate for it
 
-A nucleus of period p is a c for which 0 has exact period p; a Misiurewicz point of preperiod k and period p is a c for which
-z_k is the first point of the critical orbit on a cycle, whose exact period is p (z_0 = 0, z_1 = c).
-The decimals [a, b] enclose the number. "No other" is proved: every other part of the region is shown to have none of
-that type. In a small region, whose first roots have long periods, roots beyond the extent that is printed at the end are
-found without a proof that they are all.
+What is listed:
+  A nucleus of period p is a c for which 0 has exact period p. A Misiurewicz point of preperiod k
+  and period p is a c for which z_k is the first point of the orbit of 0 that lies on a cycle,
+  whose exact period is p (z_0 = 0, z_1 = c).
+  The decimals [a, b] enclose the number. "No other" is proved: the rest of the region has none of
+  that type. In a small region, where the first periods are long, points beyond the periods named
+  in the last line are listed too, without a proof that there are no more.
 
 Exit codes:
-  0  something was found, or it is proved that up to --max-period there is nothing
+  0  something was found, or it is proved that there is nothing up to --max-period
   2  usage, or a malformed region
   3  nothing was found within the limits
-  4  a file could not be written
+  4  standard output or the certificate could not be written, or there is nothing to certify
 )";
 
 std::string packed_region(const char* kind, const std::pair<std::string, std::string>& words) {
@@ -40,8 +43,11 @@ std::string packed_region(const char* kind, const std::pair<std::string, std::st
 CLI::App* add_locate_command(CLI::App& program, LocateWords& words) {
   CLI::App* command = program.add_subcommand(
       "locate", "List the nuclei and Misiurewicz points that a region provably contains, with proved decimals");
-  CLI::Option* box = command->add_option("--box", words.box, "The box between two opposite corners")->type_name("A B");
-  command->add_option("--disc", words.disc, "The disc about a centre, and its radius")->type_name("C R")->excludes(box);
+  CLI::Option* box = command->add_option("--box", words.box, "The box between two opposite corners")
+                         ->type_name("CORNER CORNER");
+  command->add_option("--disc", words.disc, "The disc about a centre, and its radius")
+      ->type_name("CENTRE RADIUS")
+      ->excludes(box);
   command->add_option("--kind", words.kind, "What is listed")
       ->check(CLI::IsMember({"nuclei", "misiurewicz", "both"}))
       ->capture_default_str();
@@ -49,11 +55,13 @@ CLI::App* add_locate_command(CLI::App& program, LocateWords& words) {
       ->type_name("N")
       ->check(CLI::Range(1U, kMostDigits))
       ->capture_default_str();
-  command->add_option("--most", words.options.most, "Begin no further period once so many of a kind have been found")
+  command->add_option("--most", words.options.most, "Begin no further period once so many of a kind were found")
       ->type_name("N")
       ->check(CLI::Range(std::uint64_t{1}, std::uint64_t{1'000'000}))
       ->capture_default_str();
-  command->add_option("--max-period", words.options.max_period, "Largest period; for Misiurewicz points preperiod plus period")
+  command
+      ->add_option("--max-period", words.options.max_period,
+                   "Largest period of a nucleus; for Misiurewicz points, largest preperiod plus period")
       ->type_name("N")
       ->check(CLI::Range(std::uint64_t{1}, std::uint64_t{1'000'000}))
       ->capture_default_str();
@@ -76,7 +84,7 @@ Result<LocateRequest> read_locate_words(const LocateWords& words) {
     if (auto problem = check_certificate_name(words.out)) return *problem;
   const std::string typed = has_box ? packed_region("box", words.box) : packed_region("disc", words.disc);
   const Result<Shape> region = parse_region(typed);
-  if (!region) return Failure{"locate: " + region.failure().message};
+  if (!region) return Failure{"locate: " + fault_of_region(typed, region.failure()).message};
   LocateRequest request{typed, *region, words.options};
   request.options.nuclei = words.kind != "misiurewicz";
   request.options.misiurewicz = words.kind != "nuclei";

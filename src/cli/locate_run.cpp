@@ -2,6 +2,7 @@
 
 #include <fmt/format.h>
 
+#include <algorithm>
 #include <atomic>
 #include <limits>
 #include <nlohmann/json.hpp>
@@ -22,6 +23,12 @@ namespace merestone {
 namespace {
 
 using Json = nlohmann::ordered_json;
+
+Json type_json(const Statement& type) {
+  if (const auto* nucleus = std::get_if<Nucleus>(&type)) return {{"type", "nucleus"}, {"period", nucleus->period}};
+  const auto& other = std::get<Misiurewicz>(type);
+  return {{"type", "misiurewicz"}, {"preperiod", other.preperiod}, {"period", other.period}};
+}
 
 struct Place {
   std::string re, im;
@@ -54,10 +61,12 @@ class LocateRun {
     progress_.wipe();
     std::size_t kept = 0;
     for (const Claim& claim : found.roots.claims) kept += take(claim, found.roots.is_complete) ? 1 : 0;
+    const bool is_complete = found.roots.is_complete && kept == found.roots.claims.size();
+    if (!is_complete && std::find(open_.begin(), open_.end(), found.type) == open_.end()) open_.push_back(found.type);
     if (words_.json) return;
     const std::string what = type_in_words(found.type);
-    output_.write(found.roots.is_complete ? fmt::format("  no other {} in the region\n", what)
-                                          : fmt::format("  {} {} not excluded\n", kept > 0 ? "another" : "a", what));
+    output_.write(is_complete ? fmt::format("  no other {} in the region\n", what)
+                              : fmt::format("  {} {} is not excluded\n", kept > 0 ? "another" : "a", what));
   }
 
   // What the kernel does not establish anew is not printed.
@@ -67,14 +76,15 @@ class LocateRun {
     limits.work = std::numeric_limits<std::uint64_t>::max();
     limits.bits = std::numeric_limits<std::uint32_t>::max();
     if (!std::holds_alternative<Established>(establish(claim, limits))) {
-      fmt::print(stderr, "merestone: search and kernel disagree about {} in {}, which is a defect of the program; please report it\n",
+      fmt::print(stderr,
+                 "merestone: search and kernel disagree about a {} in {}, a defect of the program; please report it\n",
                  type_in_words(claim.statement), request_.typed);
       return false;
     }
     ++found_;
     print(claim, is_complete);
     if (file_)
-      if (auto problem = file_->add(to_json(claim))) fail(problem->message);
+      if (auto problem = file_->add(to_json(claim))) give_up_file(problem->message);
     return true;
   }
 
@@ -85,13 +95,7 @@ class LocateRun {
                                 place.re, place.im));
       return;
     }
-    Json json;
-    if (const auto* nucleus = std::get_if<Nucleus>(&claim.statement)) {
-      json = {{"type", "nucleus"}, {"period", nucleus->period}};
-    } else {
-      const auto& other = std::get<Misiurewicz>(claim.statement);
-      json = {{"type", "misiurewicz"}, {"preperiod", other.preperiod}, {"period", other.period}};
-    }
+    Json json = type_json(claim.statement);
     json["re"] = place.re;
     json["im"] = place.im;
     json["real"] = place.is_real;
@@ -101,47 +105,70 @@ class LocateRun {
 
   void finish(const LocatedExtent& extent) {
     progress_.wipe();
-    const bool is_exhausted = extent.nuclei >= request_.options.max_period || !request_.options.nuclei;
-    const bool others_exhausted = extent.misiurewicz >= request_.options.max_period || !request_.options.misiurewicz;
-    if (found_ == 0) code_ = worse(code_, is_exhausted && others_exhausted ? ExitCode::established : ExitCode::undecided);
+    if (found_ == 0 && !is_exhaustive(extent)) code_ = worse(code_, ExitCode::undecided);
     if (words_.json)
-      output_.write(Json{{"region", request_.typed}, {"found", found_.load()}, {"nuclei_to_period", extent.nuclei},
-                         {"misiurewicz_to_sum", extent.misiurewicz}}.dump() + "\n");
+      output_.write(extent_json(extent).dump() + "\n");
     else
       output_.write(extent_in_words(extent));
     if (file_) finish_certificate();
-    if (output_.failed()) fail("standard output cannot be written");
+    if (output_.failed()) report(ExitCode::io_failed, "standard output cannot be written");
+  }
+
+  // Is everything known of the region, up to the largest period?
+  bool is_exhaustive(const LocatedExtent& extent) const {
+    const LocateOptions& asked = request_.options;
+    return open_.empty() && (!asked.nuclei || extent.nuclei >= asked.max_period) &&
+           (!asked.misiurewicz || extent.misiurewicz >= asked.max_period);
+  }
+
+  Json extent_json(const LocatedExtent& extent) const {
+    Json json{{"region", request_.typed}, {"found", found_.load()}};
+    if (request_.options.nuclei) json["nuclei_to_period"] = extent.nuclei;
+    if (request_.options.misiurewicz) json["misiurewicz_to_sum"] = extent.misiurewicz;
+    json["not_excluded"] = Json::array();
+    for (const Statement& type : open_) json["not_excluded"].push_back(type_json(type));
+    return json;
   }
 
   std::string extent_in_words(const LocatedExtent& extent) const {
-    std::string text = fmt::format("{} found", found_);
-    if (request_.options.nuclei)
-      text += fmt::format("; no other nuclei up to period {}", extent.nuclei);
+    const char* none = found_ > 0 ? "no other" : "no";
+    std::string text = fmt::format("{} found", found_.load());
+    if (request_.options.nuclei) text += fmt::format("; {} nuclei up to period {}", none, extent.nuclei);
     if (request_.options.misiurewicz)
-      text += fmt::format("; no other Misiurewicz points up to preperiod + period = {}", extent.misiurewicz + 1);
-    return text + ", but for what is said above\n";
+      text += fmt::format("; {} Misiurewicz points up to preperiod + period = {}", none, extent.misiurewicz);
+    return text + (!open_.empty() ? ", but for what is said above\n" : "\n");
   }
 
   void finish_certificate() {
-    if (found_ == 0) return fail(words_.out + ": not written, since nothing was found");
+    if (found_ == 0)
+      return report(code_ == ExitCode::established ? ExitCode::io_failed : code_,
+                    words_.out + ": not written, since nothing was found");
     const Result<WrittenCertificate> written = file_->finish();
-    if (!written) return fail(written.failure().message);
+    if (!written) return report(ExitCode::io_failed, written.failure().message);
     if (words_.json)
-      output_.write(Json{{"certificate", written->path}, {"claims", written->claims}, {"claims_digest", written->digest}}.dump() + "\n");
+      output_.write(Json{{"certificate", written->path}, {"claims", written->claims},
+                         {"claims_digest", written->digest}}.dump() + "\n");
     else
       output_.write(fmt::format("{}: {} {}, claims-digest {}\n", written->path, written->claims,
                                 written->claims == 1 ? "claim" : "claims", written->digest));
   }
 
-  void fail(const std::string& message) {
+  void give_up_file(const std::string& message) {
+    report(ExitCode::io_failed, message);
+    file_.reset();
+  }
+
+  void report(ExitCode code, const std::string& message) {
+    progress_.wipe();
     fmt::print(stderr, "merestone: {}\n", message);
-    code_ = worse(code_, found_ == 0 ? ExitCode::undecided : ExitCode::io_failed);
+    code_ = worse(code_, code);
   }
 
   const LocateWords& words_;
   LocateRequest request_;
   std::optional<CertificateFile> file_;
   std::atomic<std::uint64_t> found_ = 0;
+  std::vector<Statement> open_;  // types of which the region may have more than was found
   Progress progress_{[this](double seconds) { return fmt::format("{} found ({:.0f} s)", found_.load(), seconds); }};
   Output output_;
   ExitCode code_ = ExitCode::established;

@@ -4,6 +4,8 @@
 
 #include "cli/enclosure_text.hpp"
 #include "cli/proof_words.hpp"
+#include "format/shown.hpp"
+#include "format/spelling.hpp"
 #include "kernel/overloaded.hpp"
 #include "kernel/shape.hpp"
 
@@ -22,11 +24,15 @@ std::uint64_t period_of(const Rule& rule) {
 
 std::string witnesses_in_words(const Witnesses& by) {
   std::string text;
-  for (const Claim& witness : by.claims) text += (text.empty() ? "" : ", ") + witness_in_words(witness);
+  for (const Claim& witness : by.claims) text += (text.empty() ? "" : " and ") + witness_in_words(witness);
   return text;
 }
 
 }  // namespace
+
+Failure fault_of_region(const std::string& typed, const Failure& fault) {
+  return {shown(typed) + ": " + fault.message};
+}
 
 std::string type_in_words(const Statement& type) {
   if (const auto* nucleus = std::get_if<Nucleus>(&type)) return fmt::format("nucleus of period {}", nucleus->period);
@@ -57,11 +63,12 @@ std::string place_in_words(const Region& region) {
 
 std::string region_reason_in_words(const Proof& proof) {
   if (const auto* count = std::get_if<Count>(&proof.statement))
-    return fmt::format("every parameter has escape index {}", count->index);
+    return fmt::format("every parameter has escape index {} for radius {}", count->index,
+                       spell(count->bailout.to_rational()));
   if (std::holds_alternative<Inside>(proof.statement))
     return fmt::format("in the component of an attracting cycle of period {}", period_of(proof.by));
   if (const auto* by = std::get_if<Witnesses>(&proof.by)) return "it contains " + witnesses_in_words(*by);
-  return "every parameter";
+  return "every parameter escapes";
 }
 
 std::string region_rows(const Rule& by) {

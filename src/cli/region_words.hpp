@@ -1,9 +1,13 @@
 #pragma once
 #include <string>
 
+#include "kernel/result.hpp"
 #include "search/verdict.hpp"
 
 namespace merestone {
+
+/// The fault of a typed region that could not be read, with the region's name.
+Failure fault_of_region(const std::string& typed, const Failure& fault);
 
 /// Why the verdict about a region holds, in a few words.
 std::string region_reason_in_words(const Proof& proof);

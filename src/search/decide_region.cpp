@@ -15,8 +15,10 @@ namespace merestone {
 
 namespace {
 
-constexpr slong kSmallestLane = -44;              // binary exponent of the size of cells that double precision takes
+constexpr slong kSmallestLane = -44;              // binary exponent of the size of regions that double precision takes
 constexpr std::uint64_t kProbeIterations = 20'000, kFirstProbeIterations = 1'000;
+constexpr int kDeepestInBalls = 4;                // disc enclosures cost a thousand times as much as a lane
+constexpr std::size_t kMostBlindProbes = 40;       // before disc enclosures take over
 constexpr int kMostMemberSearches = 12;
 constexpr std::uint32_t kBitsForWitness = 64;     // beyond those of the region's size
 
@@ -42,7 +44,8 @@ bool proves_outside(const Rule& rule) {
 class RegionSearch {
  public:
   RegionSearch(const RegionBounds& bounds, const DecideOptions& options)
-      : bounds_(bounds), inner_(shape_of(bounds.inner)), options_(options), deadline_(options.limits.seconds) {}
+      : bounds_(bounds), whole_(bounding_box(bounds.outer)), inner_(shape_of(bounds.inner)), options_(options),
+        deadline_(options.limits.seconds) {}
 
   RegionVerdict run();
 
@@ -53,6 +56,12 @@ class RegionSearch {
   };
   static constexpr std::size_t kNone = SIZE_MAX;
 
+  void cut_and_settle();
+  bool all_settled() const {
+    return queue_.empty() && unsettled_ == 0 && (settled_outside_ == 0 || settled_inside_ == 0);
+  }
+  /// Does the arithmetic in use decide too few parameters?
+  bool is_blind() const { return blind_ > kMostBlindProbes; }
   OpenCell opened(const Box& box, std::size_t cell, int depth, std::size_t around) const;
   bool uses_discs() const { return options_.rules == Rules::all; }
   std::optional<Rule> settled_by_earlier(const OpenCell& open) const;
@@ -69,6 +78,7 @@ class RegionSearch {
   std::optional<Proof> count(const Region& region) const;
 
   const RegionBounds& bounds_;
+  Box whole_;
   Shape inner_;
   const DecideOptions& options_;
   Deadline deadline_;
@@ -78,13 +88,15 @@ class RegionSearch {
   std::optional<Claim> member_, outside_;
   std::uint32_t bits_ = 64;
   std::size_t unsettled_ = 0, settled_outside_ = 0, settled_inside_ = 0;
+  std::size_t blind_ = 0;  // probes that decided nothing
   int member_searches_ = 0;
+  bool lanes_ = true;
   bool ran_out_of_time_ = false, ran_out_of_bits_ = false;
 };
 
 OpenCell RegionSearch::opened(const Box& box, std::size_t cell, int depth, std::size_t around) const {
   OpenCell open{{box, std::nullopt}, cell, depth, around};
-  if (rounds_to_nearest() && size_exponent(box) > kSmallestLane) open.at.lane = enclose_in_double(box);
+  if (lanes_) open.at.lane = enclose_in_double(box);
   return open;
 }
 
@@ -147,7 +159,10 @@ std::optional<Rule> RegionSearch::settle_by_probe(const Probe& probe, const Open
 std::optional<Rule> RegionSearch::settle(OpenCell& open) {
   if (auto rule = settled_by_earlier(open)) return rule;
   Probe found = probe(open);
-  if (!found.point) return std::nullopt;
+  if (!found.point) {
+    ++blind_;
+    return std::nullopt;
+  }
   take_witness(found);
   auto rule = settle_by_probe(found, open);
   if (found.by) {
@@ -166,7 +181,7 @@ void RegionSearch::take(OpenCell open) {
   look_for_outside(open);
   look_for_member(open.at.box);
   if (member_ && outside_) return;
-  if (open.depth == kDeepestRule || cells_.count() + 4 > options_.limits.cells) {
+  if (open.depth == (open.at.lane ? kDeepestRule : kDeepestInBalls) || cells_.count() + 4 > options_.limits.cells) {
     ++unsettled_;
     return;
   }
@@ -177,14 +192,29 @@ void RegionSearch::take(OpenCell open) {
 }
 
 RegionVerdict RegionSearch::run() {
-  const Box whole = bounding_box(bounds_.outer);
-  bits_ = static_cast<std::uint32_t>(std::max<slong>(64, 64 - 3 * size_exponent(whole)));
+  bits_ = static_cast<std::uint32_t>(std::max<slong>(64, 64 - 3 * size_exponent(whole_)));
   if (bits_ > options_.limits.bits) {
     ran_out_of_bits_ = true;
     return undecided();
   }
-  queue_.push_back(opened(whole, RegionCells::kWhole, 0, kNone));
-  while (!queue_.empty() && !(member_ && outside_)) {
+  for (const bool lanes : {true, false}) {
+    if (lanes && !(rounds_to_nearest() && size_exponent(whole_) > kSmallestLane)) continue;
+    lanes_ = lanes;
+    cut_and_settle();
+    if (member_ && outside_) return straddles();
+    if (all_settled()) return settled();
+    if (ran_out_of_time_ || !is_blind()) break;
+  }
+  return undecided();
+}
+
+// Cuts the region anew until all its parts are settled, both witnesses have been met, or nothing more is to be expected.
+void RegionSearch::cut_and_settle() {
+  cells_ = RegionCells();
+  around_.clear();
+  unsettled_ = settled_outside_ = settled_inside_ = blind_ = 0;
+  queue_ = {opened(whole_, RegionCells::kWhole, 0, kNone)};
+  while (!queue_.empty() && !(member_ && outside_) && !(lanes_ && is_blind())) {
     if (deadline_.passed_now()) {
       ran_out_of_time_ = true;
       break;
@@ -193,9 +223,6 @@ RegionVerdict RegionSearch::run() {
     queue_.pop_front();
     take(std::move(open));
   }
-  if (member_ && outside_) return straddles();
-  const bool all_settled = queue_.empty() && unsettled_ == 0 && (settled_outside_ == 0 || settled_inside_ == 0);
-  return all_settled ? settled() : undecided();
 }
 
 RegionVerdict RegionSearch::straddles() const {
@@ -216,7 +243,7 @@ std::optional<Proof> RegionSearch::count(const Region& region) const {
 RegionVerdict RegionSearch::settled() const {
   const Rule rule = cells_.rule();
   const bool is_cut = std::holds_alternative<Quarters>(rule);
-  const Region region = is_cut ? Region(bounding_box(bounds_.outer)) : bounds_.outer;
+  const Region region = is_cut ? Region(whole_) : bounds_.outer;
   if (settled_outside_ > 0) {
     if (!is_cut)
       if (auto proof = count(region)) return {*proof, region};

@@ -74,8 +74,9 @@ class Locating {
         nuclei_ += look_for({0, late});
         extent.nuclei = deadline_.passed_now() ? late - 1 : late;
       }
-      if (!wants_others() || late > kLongestPair) continue;
-      if (look_for_pairs(late)) extent.misiurewicz = late;
+      // a pair with this index has preperiod + period = late + 1
+      if (!wants_others() || late >= std::min(options_.max_period, kLongestPair + 1)) continue;
+      if (look_for_pairs(late)) extent.misiurewicz = late + 1;
     }
     if (last < options_.max_period && wants_more()) hunt(extent);
     return extent;
@@ -103,9 +104,10 @@ class Locating {
   void take_hunted(const Claim& claim, const LocatedExtent& extent) {
     const auto* nucleus = std::get_if<Nucleus>(&claim.statement);
     const auto* other = std::get_if<Misiurewicz>(&claim.statement);
-    const bool is_wanted = nucleus != nullptr ? wants_nuclei() && nucleus->period > extent.nuclei
-                                              : wants_others() && other->preperiod + other->period - 1 > extent.misiurewicz;
-    if (!is_wanted || !is_within(shape_of(claim.region), region_)) return;
+    const std::uint64_t order = nucleus != nullptr ? nucleus->period : other->preperiod + other->period;
+    const bool is_wanted = nucleus != nullptr ? wants_nuclei() && order > extent.nuclei
+                                              : wants_others() && order > extent.misiurewicz;
+    if (!is_wanted || order > options_.max_period || !is_within(shape_of(claim.region), region_)) return;
     const Rectangle place = bounding_rectangle(claim.region);
     for (const Claim& known : hunted_)
       if (known.statement == claim.statement && !are_disjoint(place, shape_of(known.region))) return;

@@ -10,7 +10,7 @@ namespace merestone {
 struct LocateOptions {
   bool nuclei = true, misiurewicz = true;
   std::uint64_t most = 10;            // no further period is begun when so many of a kind have been found
-  std::uint64_t max_period = 20'000;  // of nuclei; for Misiurewicz points of preperiod + period
+  std::uint64_t max_period = 20'000;  // of nuclei; for Misiurewicz points preperiod + period
   IsolationLimits isolation;
   double seconds = 60;
 };
@@ -24,7 +24,7 @@ struct LocatedType {
 /// Up to which period the list is exhaustive, apart from types that say otherwise.
 struct LocatedExtent {
   std::uint64_t nuclei = 0;       // period
-  std::uint64_t misiurewicz = 0;  // preperiod + period - 1
+  std::uint64_t misiurewicz = 2;  // preperiod + period, which is 3 at least
 };
 
 /// Finds the nuclei and Misiurewicz points that the region contains, in the order of the period, and of preperiod plus

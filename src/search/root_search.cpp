@@ -78,7 +78,7 @@ std::optional<Acb> correction(const RootEquation& equation, const ApproxParamete
   return value;
 }
 
-constexpr slong kSmallestInDouble = -40;  // binary exponent of the size of regions in which double precision finds its way
+constexpr slong kSmallestInDouble = -30;  // binary exponent of the size of regions in which double precision finds its way
 constexpr double kSteepest = 32;  // slopes in units of the region's size; beyond, roots are everywhere
 
 // The orbit at the region's centre, its slopes in units of the region's size.

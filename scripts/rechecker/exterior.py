@@ -23,11 +23,11 @@ def _jet(c, index):
     z = d = e = Ball(0, 0, 0, places)
     unit = one(places)
     for n in range(index):
-        z, d, e = z * z + c, (z * d).doubled() + unit, (d * d + z * e).doubled()
         if z.least() > 1 << (places + FARTHEST):
-            raise Refuted(f"z_{n + 1} is beyond 2^64, before index {index}")
+            raise Refuted(f"z_{n} is beyond 2^64, before index {index}")
         if 2 * z.r > (1 << places) + z.most() or d.most() >> 3 * places:
-            raise TooWide(f"the enclosure of z_{n + 1} or of its derivative is too wide, before index {index}")
+            raise TooWide(f"the enclosure of z_{n} or of its derivative is too wide, before index {index}")
+        z, d, e = z * z + c, (z * d).doubled() + unit, (d * d + z * e).doubled()
     return z, d, e
 
 

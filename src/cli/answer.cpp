@@ -75,11 +75,13 @@ std::string reason_in_words(const Proof& proof) {
 }
 
 std::string limit_in_words(const Undecided& undecided) {
+  const bool is_region = undecided.cells > 0;
   switch (undecided.limit) {
     case Limit::iterations:
       return fmt::format("the orbit stays within the bailout for {} iterations; raise --iterations",
                          undecided.iterations);
     case Limit::precision:
+      if (is_region) return fmt::format("{} bits are needed; raise --bits", undecided.bits);
       return fmt::format("{} bits do not suffice after {} iterations; raise --bits", undecided.bits,
                          undecided.iterations);
     case Limit::cells:
@@ -88,6 +90,7 @@ std::string limit_in_words(const Undecided& undecided) {
     case Limit::time:
       break;
   }
+  if (is_region) return fmt::format("the time is up after {} cells; raise --time-limit", undecided.cells);
   return fmt::format("the time is up at {} bits after {} iterations; raise --time-limit", undecided.bits,
                      undecided.iterations);
 }

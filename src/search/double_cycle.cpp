@@ -37,14 +37,13 @@ Return approx_return(Complex c, Complex z, std::uint64_t period) {
 
 // Newton's method on f^period(z) - z; nothing when it does not settle, which shows after a few steps.
 std::optional<Complex> approx_fixed_point(Complex c, Complex z, std::uint64_t period) {
-  constexpr int kMostSteps = 24, kPatientSteps = 3;
-  double before = 1;
+  constexpr int kMostSteps = 24, kPatientSteps = 6;
+  constexpr double kHopeless = 0x1p-8;
   for (int step = 0; step < kMostSteps; ++step) {
     const Return r = approx_return(c, z, period);
     const Complex correction = (r.image - z) / (r.multiplier - Complex{1, 0});
     const double size = approx_modulus(correction);
-    if (!(size < 1) || (step >= kPatientSteps && size > 0.75 * before)) return std::nullopt;
-    before = size;
+    if (!(size < 1) || (step == kPatientSteps && size > kHopeless)) return std::nullopt;
     z = z - correction;
     if (size < 0x1p-44) return z;
   }

@@ -67,8 +67,15 @@ std::optional<Found> found_at(const Complex& at) {
 
 // 1/4, -3/4, -5/4, -7/4, -2, i and -i are on the boundary of M (the ends of real intervals of components, tips).
 void require_misses_known_points(const DoubleCircle& disc) {
-  for (const Complex& point : {Complex{ratio(1, 4), 0}, {ratio(-3, 4), 0}, {ratio(-5, 4), 0}, {ratio(-7, 4), 0},
-                               {-2, 0}, {0, 1}, {0, -1}, {0, 0}, {-1, 0}})
+  for (const Complex& point : {Complex{ratio(1, 4), 0},
+                               {ratio(-3, 4), 0},
+                               {ratio(-5, 4), 0},
+                               {ratio(-7, 4), 0},
+                               {-2, 0},
+                               {0, 1},
+                               {0, -1},
+                               {0, 0},
+                               {-1, 0}})
     REQUIRE_FALSE(reaches(disc, point));
 }
 
@@ -85,7 +92,8 @@ TEST_CASE("rim points of an exterior disc escape") {
     require_misses_known_points(found->disc);
     const mpq_class almost = ratio(9999, 10'000) * exact(found->disc.radius);
     for (int i = 0; i < 6; ++i)
-      REQUIRE(reference::escape_index(centre(found->disc) + almost * source.direction(), 2, 40 * found->index + 20'000));
+      REQUIRE(
+          reference::escape_index(centre(found->disc) + almost * source.direction(), 2, 40 * found->index + 20'000));
   }
   CHECK(discs > reference::repeats(200) / 2);
 }
@@ -145,8 +153,14 @@ TEST_CASE("beside the cusp, the bifurcation points and the tips the disc does no
     double x, y, along_x, along_y;
     int closest;
   };
-  for (const Approach& a : {Approach{0.25, 0, 1, 0, -12}, {-0.75, 0, 0, 1, -8}, {-0.75, 0, 0, -1, -8}, {0, 1, 0, 1, -30},
-                            {0, 1, 1, 0, -30}, {0, -1, -1, 0, -30}, {-1.25, 0, 0, 1, -4}, {-2, 0, 0, 1, -30}})
+  for (const Approach& a : {Approach{0.25, 0, 1, 0, -12},
+                            {-0.75, 0, 0, 1, -8},
+                            {-0.75, 0, 0, -1, -8},
+                            {0, 1, 0, 1, -30},
+                            {0, 1, 1, 0, -30},
+                            {0, -1, -1, 0, -30},
+                            {-1.25, 0, 0, 1, -4},
+                            {-2, 0, 0, 1, -30}})
     for (int exponent = -2; exponent >= a.closest; --exponent) {
       const double d = std::ldexp(1.0, exponent);
       const auto found = found_at(exact(a.x + d * a.along_x, a.y + d * a.along_y));
@@ -160,7 +174,8 @@ TEST_CASE("beside the cusp, the bifurcation points and the tips the disc does no
 
 TEST_CASE("there is no disc about members, beyond the limit, or for parameters that are too large") {
   PointSource source(3704);
-  for (const Complex& c : {Complex{0, 0}, {-1, 0}, {-2, 0}, {0, 1}, {ratio(1, 4), 0}, {ratio(-3, 4), 0}, {ratio(-7, 4), 0}}) {
+  for (const Complex& c :
+       {Complex{0, 0}, {-1, 0}, {-2, 0}, {0, 1}, {ratio(1, 4), 0}, {ratio(-3, 4), 0}, {ratio(-7, 4), 0}}) {
     const ExteriorLane lane = exterior_disc(c.re.get_d(), c.im.get_d(), kSteps);
     CHECK(lane.index == 0);
     CHECK_FALSE(lane.circle);

@@ -48,7 +48,8 @@ bool is_in_component(const Complex& c, std::uint64_t period) {
   return period == 1 ? q * (q + u) < y / 4 : x * x + y < ratio(1, 16);
 }
 
-// c = m/2 - m²/4 has a fixed point m/2, c = m/4 - 1 a cycle of (-1 ± sqrt(-3 - 4 c))/2, both of multiplier m (textbook).
+// c = m/2 - m²/4 has a fixed point m/2, c = m/4 - 1 a cycle of (-1 ± sqrt(-3 - 4 c))/2, both of multiplier m
+// (textbook).
 StableParameter with_multiplier(const Complex& m, std::uint64_t period) {
   const Complex half = ratio(1, 2) * m;
   const Complex typed = period == 1 ? half - half * half : Complex{-1, 0} + ratio(1, 4) * m;
@@ -113,7 +114,8 @@ TEST_CASE("rim points of a disc of a component have attracting cycles of the sam
     INFO("centre " << found->at.re << ", " << found->at.im << ", period " << found->period);
     const mpq_class almost = ratio(9999, 10'000) * exact(found->disc.radius);
     for (int i = 0; i < 4; ++i) {
-      const auto cycle = reference::find_cycle(centre(found->disc) + almost * source.direction(), {0, 0}, found->period, 256, 400);
+      const auto cycle =
+          reference::find_cycle(centre(found->disc) + almost * source.direction(), {0, 0}, found->period, 256, 400);
       REQUIRE(cycle);
       REQUIRE(cycle->attracting);
       REQUIRE(cycle->period() == found->period);

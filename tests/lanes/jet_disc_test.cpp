@@ -156,8 +156,12 @@ TEST_CASE("without enough precision, and for what is not a number, there is no d
   CHECK_FALSE(univalent_disc(0, 0, {1, 0, 0.7}, {1, 0, 0}));
   CHECK_FALSE(univalent_disc(0, 0, {0, 0, 0}, {1, 0, 0}));
   CHECK_FALSE(univalent_disc(1, 0, {0x1p-60, 0, 0}, {1, 0, 0}));  // lost beside the rounding of the centre
-  for (const TrackedComplex& bad : {TrackedComplex{nan, 0, 0}, {0, nan, 0}, {1, 0, nan}, {infinity, 0, infinity},
-                                    {1, 0, infinity}, {infinity, 0, 0}}) {
+  for (const TrackedComplex& bad : {TrackedComplex{nan, 0, 0},
+                                    {0, nan, 0},
+                                    {1, 0, nan},
+                                    {infinity, 0, infinity},
+                                    {1, 0, infinity},
+                                    {infinity, 0, 0}}) {
     CHECK_FALSE(univalent_disc(0, 0, bad, {1, 0, 0}));
     CHECK_FALSE(univalent_disc(0, 0, {1, 0, 0}, bad));
   }

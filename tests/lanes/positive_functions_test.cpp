@@ -64,7 +64,8 @@ TEST_CASE("the logarithm is within its error from 1 to 2^1000") {
 
 TEST_CASE("the logarithm is within its error at the ends, at powers of two and where the fraction is split") {
   for (int exponent = 0; exponent <= 1000; ++exponent)
-    for (const double start : {std::ldexp(1.0, exponent), std::ldexp(0x1.6p0, exponent), std::ldexp(0x1.5p0, exponent)}) {
+    for (const double start :
+         {std::ldexp(1.0, exponent), std::ldexp(0x1.6p0, exponent), std::ldexp(0x1.5p0, exponent)}) {
       double x = start;
       for (int k = 0; k < 4 && x <= 0x1p1000; ++k, x = std::nextafter(x, 0x1p1010)) check_logarithm(x);
       x = start;

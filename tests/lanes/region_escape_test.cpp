@@ -37,8 +37,11 @@ TEST_CASE("all parameters of a region escape as is proved") {
   PointSource source(3501);
   std::uint64_t proved = 0, counts = 0, small = 0, small_proved = 0;
   for (std::uint64_t k = 0; k < reference::repeats(1500); ++k) {
-    const Complex typed = source.one_in(2) ? source.biased() : mpq_class(reference::ratio(source.between(0, 31), 32) + 1) * source.direction();
-    const DoubleParameter c{typed.re.get_d(), typed.im.get_d(), std::ldexp(1.0, -static_cast<int>(source.between(2, 48)))};
+    const Complex typed = source.one_in(2)
+                              ? source.biased()
+                              : mpq_class(reference::ratio(source.between(0, 31), 32) + 1) * source.direction();
+    const DoubleParameter c{typed.re.get_d(), typed.im.get_d(),
+                            std::ldexp(1.0, -static_cast<int>(source.between(2, 48)))};
     const RegionEscape escape = region_escape(c, 2000);
     const bool leaves_soon = reference::exact_escape_index(exact(c), 2, 8) > 0;
     if (leaves_soon && c.error < 0x1p-46) {

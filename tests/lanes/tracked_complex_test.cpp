@@ -142,7 +142,8 @@ TEST_CASE("moduli are bounded from below and above, closely") {
 TEST_CASE("where squares and products underflow the bounds hold") {
   PointSource source(3107);
   Most most;
-  const std::vector<double> tiny = {0, 0x1p-1074, 0x1p-1022, 0x1p-600, 0x1.8p-540, 0x1.fffffffffffffp-538, 0x1.2345p-520};
+  const std::vector<double> tiny = {
+      0, 0x1p-1074, 0x1p-1022, 0x1p-600, 0x1.8p-540, 0x1.fffffffffffffp-538, 0x1.2345p-520};
   for (const double x : tiny)
     for (const double y : tiny)
       for (const double other : {0x1p-1074, 0x1.8p-540, 0x1.7p-199, 1.5, 0x1.1p400}) {

@@ -38,7 +38,8 @@ struct Most {
 };
 
 // The exact step of z, z', z'' as differentiation gives it.
-void check_step(const TrackedJet& jet, const TrackedJet& next, const Complex& c, const std::array<Complex, 3>& units, Most& most) {
+void check_step(const TrackedJet& jet, const TrackedJet& next, const Complex& c, const std::array<Complex, 3>& units,
+                Most& most) {
   const Complex z = middle(jet.z) + exact(jet.z.error) * units[0];
   const Complex a = middle(jet.first) + exact(jet.first.error) * units[1];
   const Complex b = middle(jet.second) + exact(jet.second.error) * units[2];
@@ -119,7 +120,7 @@ TEST_CASE("old values stand on every right-hand side") {
   CHECK(middle(jet.second) == Complex{2, 0});
   jet = next_tracked(jet, 0.5, 0);
   CHECK(middle(jet.z) == Complex{mpq_class(17, 16), 0});
-  CHECK(middle(jet.first) == Complex{4, 0});   // 4c³ + 6c² + 2c + 1
+  CHECK(middle(jet.first) == Complex{4, 0});    // 4c³ + 6c² + 2c + 1
   CHECK(middle(jet.second) == Complex{11, 0});  // 12c² + 12c + 2
 }
 
@@ -138,7 +139,8 @@ TEST_CASE("the errors hold along orbits of doubles") {
 TEST_CASE("where moduli underflow the bounds of a jet hold") {
   Most most;
   PointSource source(3304);
-  for (const double tiny : {0.0, 0x1p-1074, 0x1p-600, 0x1.8p-540, 0x1.fffffffffffffp-538, 0x1p-501, 0x1p-500, 0x1.2p-499})
+  for (const double tiny :
+       {0.0, 0x1p-1074, 0x1p-600, 0x1.8p-540, 0x1.fffffffffffffp-538, 0x1p-501, 0x1p-500, 0x1.2p-499})
     for (const double other : {0.0, tiny, 0x1p-1022, 1.75, 0x1.1p240})
       for (const double error : {0.0, 0x1p-1074, 0x1p-300, 0x1p-10}) {
         const TrackedJet jet{tracked(tiny, other > 2 ? 0 : other, error), tracked(other > 2 ? 2 : other, -tiny, error),
@@ -146,6 +148,15 @@ TEST_CASE("where moduli underflow the bounds of a jet hold") {
         check_step(jet, next_tracked(jet, tiny, 0x1p-1060), exact(tiny, 0x1p-1060),
                    {source.direction(), source.direction(), source.direction()}, most);
       }
+}
+
+TEST_CASE("a modulus that underflows counts beside a large error of the derivatives") {
+  Most most;
+  for (const double tiny : {0x1.8p-540, 0x1.fffffffffffffp-538, 0x1.2p-530}) {
+    const TrackedJet jet{tracked(tiny, tiny, 0), tracked(0, 1, 0), tracked(1, 1, 0x1p500)};
+    for (const Complex& unit : reference::unit_directions())
+      check_step(jet, next_tracked(jet, 0, 0), {0, 0}, {unit, unit, unit}, most);
+  }
 }
 
 TEST_CASE("a jet that overflows or is not a number has no error bound") {

@@ -11,7 +11,8 @@ Box box(double x, double y, double half) {
   return {{Dyadic(x - half), Dyadic(y - half)}, {Dyadic(x + half), Dyadic(y + half)}};
 }
 Claim member(double x, double y, std::uint64_t period, double z) {
-  return {Inside{}, Point{to_rational({Dyadic(x), Dyadic(y)})}, std::nullopt, AttractingDisc{period, disc(z, 0, 0x1p-6), 128}};
+  return {Inside{}, Point{to_rational({Dyadic(x), Dyadic(y)})}, std::nullopt,
+          AttractingDisc{period, disc(z, 0, 0x1p-6), 128}};
 }
 Claim outside(double x, double y, std::uint64_t index) {
   return {Outside{}, Point{to_rational({Dyadic(x), Dyadic(y)})}, std::nullopt, Escape{index, 128}};
@@ -65,7 +66,8 @@ TEST_CASE("no claim about a region is written for what is false") {
   CHECK_FALSE(written(disc(-2, 0, 0.5), Outside{}, ExteriorDisc{{Dyadic(-2.5), Dyadic()}, 5, 128}));
   CHECK_FALSE(written(disc(0, 0, 0.5), Inside{}, InteriorDisc{{Dyadic(), Dyadic()}, {1, disc(0, 0, 0.125), 128}}));
   CHECK_FALSE(written(disc(0, 0, 0.125), Nucleus{2}, IsolatedRoot{128}));
-  CHECK_FALSE(written(box(3, 0, 0.5), Inside{}, Quarters{{Escape{1, 64}, Escape{1, 64}, Escape{1, 64}, Escape{1, 64}}}));
+  CHECK_FALSE(
+      written(box(3, 0, 0.5), Inside{}, Quarters{{Escape{1, 64}, Escape{1, 64}, Escape{1, 64}, Escape{1, 64}}}));
 }
 
 TEST_CASE("the region contains the request, or lies in it, as the statement demands") {

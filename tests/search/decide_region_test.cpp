@@ -31,7 +31,8 @@ mpq_class tenth(unsigned n) {
 
 // The published root, to some 600 binary places.
 Complex precise(const reference::PublishedPoint& point) {
-  const auto root = reference::root_near({reference::decimal(point.re), reference::decimal(point.im)}, point.preperiod, point.period);
+  const auto root =
+      reference::root_near({reference::decimal(point.re), reference::decimal(point.im)}, point.preperiod, point.period);
   REQUIRE(root);
   return *root;
 }
@@ -39,8 +40,8 @@ Complex precise(const reference::PublishedPoint& point) {
 }  // namespace
 
 TEST_CASE("regions within the components of periods 1 and 2 are inside") {
-  for (const char* text : {"box -0.1-0.1i 0.1+0.1i", "disc 0 0.2", "disc 0 0.249", "disc -0.5 0.1", "box -0.7-0.05i -0.6+0.05i",
-                           "disc -1 0.12", "box -1.1-0.1i -0.9+0.1i", "disc -1+1/10i 1/10",
+  for (const char* text : {"box -0.1-0.1i 0.1+0.1i", "disc 0 0.2", "disc 0 0.249", "disc -0.5 0.1",
+                           "box -0.7-0.05i -0.6+0.05i", "disc -1 0.12", "box -1.1-0.1i -0.9+0.1i", "disc -1+1/10i 1/10",
                            "box -1/3-1/7i 1/7+1/9i", "disc 1/3+1/3i 1/200"})
     require_word(text, "inside");
 }
@@ -57,9 +58,9 @@ TEST_CASE("discs in a component whose bounding box is not in it are inside, or u
 }
 
 TEST_CASE("regions beyond radius 2, or beyond the real segment, are outside") {
-  for (const char* text : {"box 2.01-1i 3+1i", "disc 3 0.9", "box -5-5i -2.1+5i", "box 100+100i 1000+1000i", "disc 1e10i 1e9",
-                           "disc 1 0.1", "box 0.5+0.7i 0.6+0.8i", "disc -21/10+0i 1/20", "box 1/3-1/100i 2/5+1/100i",
-                           "box -3+1.9i 3+2.9i", "disc -2.5 0.49"})
+  for (const char* text : {"box 2.01-1i 3+1i", "disc 3 0.9", "box -5-5i -2.1+5i", "box 100+100i 1000+1000i",
+                           "disc 1e10i 1e9", "disc 1 0.1", "box 0.5+0.7i 0.6+0.8i", "disc -21/10+0i 1/20",
+                           "box 1/3-1/100i 2/5+1/100i", "box -3+1.9i 3+2.9i", "disc -2.5 0.49"})
     require_word(text, "outside");
 }
 

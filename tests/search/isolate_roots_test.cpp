@@ -39,10 +39,16 @@ TEST_CASE("the equation's type is what its roots are") {
 }
 
 TEST_CASE("a root on the rim is not said to be in the region, and the list not to be complete") {
-  for (const auto& [equation, text] :
-       {std::pair{kPeriod1, "box 0-1i 1+1i"}, {kPeriod1, "box -1+0i 1+1i"}, {kPeriod1, "disc 1 1"}, {kPeriod1, "box 0 1+1i"},
-        {kPeriod2, "box -1-0.1i -0.5+0.1i"}, {kPeriod2, "disc -1/2 1/2"}, {kTip, "disc -1 1"}, {kTip, "box -3-1i -2+1i"},
-        {kSecondTip, "box -1-1i 1+1i"}, {kSecondTip, "disc 3/5+1/5i 1"}}) {
+  for (const auto& [equation, text] : {std::pair{kPeriod1, "box 0-1i 1+1i"},
+                                       {kPeriod1, "box -1+0i 1+1i"},
+                                       {kPeriod1, "disc 1 1"},
+                                       {kPeriod1, "box 0 1+1i"},
+                                       {kPeriod2, "box -1-0.1i -0.5+0.1i"},
+                                       {kPeriod2, "disc -1/2 1/2"},
+                                       {kTip, "disc -1 1"},
+                                       {kTip, "box -3-1i -2+1i"},
+                                       {kSecondTip, "box -1-1i 1+1i"},
+                                       {kSecondTip, "disc 3/5+1/5i 1"}}) {
     const IsolatedRoots roots = isolated(equation, text);
     INFO(text);
     CHECK_FALSE(roots.is_complete);
@@ -51,8 +57,11 @@ TEST_CASE("a root on the rim is not said to be in the region, and the list not t
 }
 
 TEST_CASE("a root just inside the rim is found, one just outside is not") {
-  for (const auto& [text, times] : {std::pair{"box -1e-12-1i 1+1i", 1U}, {"box 1e-12-1i 1+1i", 0U}, {"disc 1 1000000000001/1000000000000", 1U},
-                                    {"disc 1 999999999999/1000000000000", 0U}, {"box -1e-15-1e-15i 1+1i", 1U}}) {
+  for (const auto& [text, times] : {std::pair{"box -1e-12-1i 1+1i", 1U},
+                                    {"box 1e-12-1i 1+1i", 0U},
+                                    {"disc 1 1000000000001/1000000000000", 1U},
+                                    {"disc 1 999999999999/1000000000000", 0U},
+                                    {"box -1e-15-1e-15i 1+1i", 1U}}) {
     const IsolatedRoots roots = isolated(kPeriod1, text);
     INFO(text);
     CHECK(roots.is_complete);
@@ -90,7 +99,8 @@ TEST_CASE("in any box the complete list is the part of the whole list that lies 
     REQUIRE(all.is_complete);
     for (std::uint64_t k = 0; k < reference::repeats(60); ++k) {
       const Complex near = source.one_in(2) ? centre(source.pick(all.claims)) : source.in_window(20);
-      const mpq_class size = reference::power_of_two(source.between(-12, 0)) * reference::ratio(source.between(5, 9), 8);
+      const mpq_class size =
+          reference::power_of_two(source.between(-12, 0)) * reference::ratio(source.between(5, 9), 8);
       const Complex lo = reference::truncated(near + size * source.in_unit_disc() - Complex{size, size}, 40);
       const Complex hi = lo + mpq_class(2) * Complex{size, size / source.between(1, 3)};
       const IsolatedRoots roots = isolated(equation, regions::typed_box(lo, hi));
@@ -99,9 +109,8 @@ TEST_CASE("in any box the complete list is the part of the whole list that lies 
       REQUIRE(roots.claims.size() <= expected.size());
       if (roots.is_complete) REQUIRE(roots.claims.size() == expected.size());
       for (const Claim& claim : roots.claims)
-        REQUIRE(std::any_of(expected.begin(), expected.end(), [&](const Complex& c) {
-          return norm(c - centre(claim)) < reference::power_of_two(-100);
-        }));
+        REQUIRE(std::any_of(expected.begin(), expected.end(),
+                            [&](const Complex& c) { return norm(c - centre(claim)) < reference::power_of_two(-100); }));
     }
   }
 }
@@ -113,6 +122,15 @@ TEST_CASE("limits are kept, and the list is then not said to be complete") {
   CHECK_FALSE(isolated(kPeriod3, all, {64, 10}).is_complete);
   CHECK_FALSE(isolated(kPeriod3, all, {}, 0).is_complete);
   CHECK(isolated(kPeriod3, all, {}, 0).claims.empty());
+}
+
+TEST_CASE("where cells are not cut far enough to tell roots apart the list is not said to be complete") {
+  for (const slong places : {0, 1, 2, 3}) {
+    const IsolatedRoots roots = isolated({0, 8}, "box -2.5-1.5i 1+1.5i", {places, 1'000'000});
+    INFO(places << " places");
+    CHECK(roots.claims.size() < 120);  // OEIS A000740, verified
+    CHECK_FALSE(roots.is_complete);
+  }
 }
 
 TEST_CASE("the discs are as small as is asked for") {

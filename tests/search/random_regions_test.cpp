@@ -27,7 +27,8 @@ std::string any_region(PointSource& source) {
   const long exponent = source.between(-40, -4);
   const mpq_class size = power_of_two(exponent) * ratio(source.between(3, 5), 4);
   const Complex near = source.one_in(3) ? source.biased() : beside_boundary(source, std::max(exponent - 2, -44L));
-  const Complex centre = reference::truncated(near + mpq_class(ratio(source.between(0, 12), 2) * size) * source.direction(), 80);
+  const Complex centre =
+      reference::truncated(near + mpq_class(ratio(source.between(0, 12), 2) * size) * source.direction(), 80);
   if (source.one_in(2)) return regions::typed_disc(centre, size / 2);
   const Complex half{size / 2, source.one_in(2) ? size / 2 : mpq_class(size / 3)};
   return regions::typed_box(centre - half, centre + half);
@@ -63,9 +64,11 @@ DecideOptions limited(Rules rules) {
 
 // Without the theory of univalent functions: Lemmas E2, I1, I3, and P2, whose isolated nuclei may be witnesses.
 bool is_elementary(const Rule& rule) {
-  if (const auto* by = std::get_if<Quarters>(&rule)) return std::all_of(by->rules.begin(), by->rules.end(), is_elementary);
+  if (const auto* by = std::get_if<Quarters>(&rule))
+    return std::all_of(by->rules.begin(), by->rules.end(), is_elementary);
   if (const auto* by = std::get_if<Witnesses>(&rule))
-    return std::all_of(by->claims.begin(), by->claims.end(), [](const Claim& claim) { return is_elementary(claim.by); });
+    return std::all_of(by->claims.begin(), by->claims.end(),
+                       [](const Claim& claim) { return is_elementary(claim.by); });
   return std::holds_alternative<Escape>(rule) || std::holds_alternative<AttractingDisc>(rule) ||
          std::holds_alternative<ClosedForm>(rule) || std::holds_alternative<IsolatedRoot>(rule);
 }

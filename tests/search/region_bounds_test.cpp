@@ -68,7 +68,8 @@ TEST_CASE("of a rectangle, outer contains it, inner lies in it, and they are clo
     const mpq_class room = std::min(width, height) * power_of_two(-61);
     const Complex at_lo = inner.lo - outer.lo, at_hi = outer.hi - inner.hi;
     for (const mpq_class& gap : {at_lo.re, at_lo.im, at_hi.re, at_hi.im}) REQUIRE(gap <= room);
-    if (!is_dyadic(typed.lo.re) || !is_dyadic(typed.lo.im) || !is_dyadic(typed.hi.re) || !is_dyadic(typed.hi.im)) continue;
+    if (!is_dyadic(typed.lo.re) || !is_dyadic(typed.lo.im) || !is_dyadic(typed.hi.re) || !is_dyadic(typed.hi.im))
+      continue;
     ++dyadic;
     REQUIRE(contains(typed, outer));
     REQUIRE(contains(inner, typed));
@@ -103,7 +104,8 @@ TEST_CASE("the binary exponent of the size is right") {
   PointSource source(4303);
   for (std::uint64_t k = 0; k < reference::repeats(3'000); ++k) {
     const mpq_class radius = source.dyadic(20, source.between(-300, 10));
-    const slong e = size_exponent(Disc{reference::to_dyadic(Complex{source.any_dyadic(), 0}), reference::to_dyadic(radius)});
+    const slong e =
+        size_exponent(Disc{reference::to_dyadic(Complex{source.any_dyadic(), 0}), reference::to_dyadic(radius)});
     REQUIRE(2 * radius < power_of_two(e));
     REQUIRE(2 * radius >= power_of_two(e - 2));
   }
@@ -122,7 +124,8 @@ TEST_CASE("a box in double precision contains the exact one, closely") {
       continue;
     }
     ++enclosed;
-    const Complex half{mpq_class(lane->half_width), mpq_class(lane->half_height)}, centre{mpq_class(lane->x), mpq_class(lane->y)};
+    const Complex half{mpq_class(lane->half_width), mpq_class(lane->half_height)},
+        centre{mpq_class(lane->x), mpq_class(lane->y)};
     INFO(box.lo.re << ", " << box.lo.im << ", width " << width);
     REQUIRE(contains({centre - half, centre + half}, box));
     // half an ulp of the centre, and the rounding of the half width

@@ -16,9 +16,7 @@ using reference::exact;
 using reference::PointSource;
 
 /// As people type it, exactly.
-inline std::string typed(const Complex& c) {
-  return c.re.get_str() + (c.im < 0 ? "" : "+") + c.im.get_str() + "i";
-}
+inline std::string typed(const Complex& c) { return c.re.get_str() + (c.im < 0 ? "" : "+") + c.im.get_str() + "i"; }
 inline std::string typed_box(const Complex& lo, const Complex& hi) { return "box " + typed(lo) + " " + typed(hi); }
 inline std::string typed_disc(const Complex& c, const mpq_class& r) { return "disc " + typed(c) + " " + r.get_str(); }
 
@@ -52,7 +50,8 @@ inline Complex sample(const Shape& typed, PointSource& source) {
     return exact(disc->centre) + exact(disc->radius) * source.in_unit_disc();
   const auto& box = std::get<Rectangle>(typed);
   const auto between = [&](const Rational& lo, const Rational& hi) {
-    const mpq_class share = source.one_in(3) ? mpq_class(source.below(2)) : reference::ratio(source.between(0, 1024), 1024);
+    const mpq_class share =
+        source.one_in(3) ? mpq_class(source.below(2)) : reference::ratio(source.between(0, 1024), 1024);
     return mpq_class(exact(lo) + share * (exact(hi) - exact(lo)));
   };
   return {between(box.x_lo, box.x_hi), between(box.y_lo, box.y_hi)};
@@ -60,7 +59,8 @@ inline Complex sample(const Shape& typed, PointSource& source) {
 
 /// Does c leave the disc of radius 2 within so many steps, by MPFR at so many bits beyond the digits of c?
 inline bool leaves(const Complex& c, std::uint64_t limit, mpfr_prec_t bits = 128) {
-  const auto digits = static_cast<mpfr_prec_t>(mpz_sizeinbase(c.re.get_den_mpz_t(), 2) + mpz_sizeinbase(c.im.get_den_mpz_t(), 2));
+  const auto digits =
+      static_cast<mpfr_prec_t>(mpz_sizeinbase(c.re.get_den_mpz_t(), 2) + mpz_sizeinbase(c.im.get_den_mpz_t(), 2));
   reference::MpfrOrbit orbit(c, bits + digits);
   for (std::uint64_t n = 0; n < limit; ++n) {
     orbit.step();
@@ -93,13 +93,13 @@ inline void confirm_witness_root(const Claim& claim, std::uint64_t preperiod, st
 
 /// What the witness says is true of it, by MPFR.
 inline void confirm_witness(const Claim& claim) {
-  if (const auto* nucleus = std::get_if<Nucleus>(&claim.statement)) return confirm_witness_root(claim, 0, nucleus->period);
+  if (const auto* nucleus = std::get_if<Nucleus>(&claim.statement))
+    return confirm_witness_root(claim, 0, nucleus->period);
   if (const auto* point = std::get_if<Misiurewicz>(&claim.statement))
     return confirm_witness_root(claim, point->preperiod, point->period);
   const Complex at = exact(std::get<Point>(claim.region).at);
   if (std::holds_alternative<Outside>(claim.statement)) REQUIRE(leaves(at, std::get<Escape>(claim.by).index + 500));
-  if (std::holds_alternative<Inside>(claim.statement))
-    verdicts::confirm_inside(at, std::get<AttractingDisc>(claim.by));
+  if (std::holds_alternative<Inside>(claim.statement)) verdicts::confirm_inside(at, std::get<AttractingDisc>(claim.by));
 }
 
 inline void confirm_witnesses(const Witnesses& by, const Shape& typed) {
@@ -109,7 +109,8 @@ inline void confirm_witnesses(const Witnesses& by, const Shape& typed) {
     confirm_witness(claim);
     boundary = boundary || std::holds_alternative<Misiurewicz>(claim.statement);
     outside = outside || std::holds_alternative<Outside>(claim.statement);
-    members = members || std::holds_alternative<Inside>(claim.statement) || std::holds_alternative<Nucleus>(claim.statement);
+    members =
+        members || std::holds_alternative<Inside>(claim.statement) || std::holds_alternative<Nucleus>(claim.statement);
   }
   REQUIRE((boundary || (members && outside)));
 }
@@ -118,7 +119,8 @@ inline void confirm_witnesses(const Witnesses& by, const Shape& typed) {
 inline void confirm(const RegionVerdict& verdict, const Shape& typed, PointSource& source, int samples = 8) {
   const Proof* proof = std::get_if<Proof>(&verdict.verdict);
   if (proof == nullptr) return;
-  if (std::holds_alternative<Straddles>(proof->statement)) return confirm_witnesses(std::get<Witnesses>(proof->by), typed);
+  if (std::holds_alternative<Straddles>(proof->statement))
+    return confirm_witnesses(std::get<Witnesses>(proof->by), typed);
   const bool is_inside = std::holds_alternative<Inside>(proof->statement);
   const auto* count = std::get_if<Count>(&proof->statement);
   for (int k = 0; k < samples; ++k) {

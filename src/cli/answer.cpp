@@ -87,6 +87,9 @@ std::string limit_in_words(const Undecided& undecided) {
     case Limit::cells:
       return fmt::format("cut into {} cells without a verdict; decide smaller regions, or raise --cells",
                          undecided.cells);
+    case Limit::depth:
+      return fmt::format("cut into {} cells, as finely as it may be, without a verdict; decide smaller regions",
+                         undecided.cells);
     case Limit::time:
       break;
   }

@@ -67,7 +67,7 @@ void add_proof(Json& json, const Answer& answer, const Proof& proof) {
 }
 
 void add_undecided(Json& json, const Undecided& undecided) {
-  static constexpr const char* kLimits[] = {"iterations", "precision", "time", "cells"};
+  static constexpr const char* kLimits[] = {"iterations", "precision", "time", "cells", "depth"};
   json["limit"] = kLimits[static_cast<std::size_t>(undecided.limit)];
   json["iterations"] = undecided.iterations;
   json["bits"] = undecided.bits;

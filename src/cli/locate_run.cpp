@@ -51,7 +51,10 @@ class LocateRun {
 
   int run() {
     const LocatedExtent extent =
-        locate(request_.region, request_.options, [this](const LocatedType& found) { take(found); });
+        locate(request_.region, request_.options, [this](const LocatedType& found) {
+          take(found);
+          return !output_.failed();
+        });
     finish(extent);
     return static_cast<int>(code_);
   }

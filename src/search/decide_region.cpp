@@ -3,11 +3,11 @@
 #include <algorithm>
 #include <deque>
 
-#include "kernel/rules/rules.hpp"
 #include "kernel/work.hpp"
 #include "lanes/region_escape.hpp"
 #include "search/approx_escape.hpp"
 #include "search/cell_rule.hpp"
+#include "search/closed_form_region.hpp"
 #include "search/region_cells.hpp"
 #include "search/root_search.hpp"
 
@@ -29,12 +29,17 @@ struct OpenCell {
   std::size_t around;  // the last probe of a cell around it
 };
 
-// The period of the first component that the rule speaks of; 0 when it speaks of none.
-std::uint64_t first_period(const Rule& rule) {
-  if (const auto* by = std::get_if<InteriorDisc>(&rule)) return by->cycle.period;
-  if (const auto* by = std::get_if<AttractingDisc>(&rule)) return by->period;
-  if (const auto* by = std::get_if<Quarters>(&rule)) return first_period(by->rules.front());
-  return 0;
+// A parameter near the centre with few digits: people read witnesses.
+ComplexDyadic short_centre_of(const Box& box) {
+  constexpr slong kBitsOfSize = 10;
+  const slong exponent = size_exponent(box) - kBitsOfSize;
+  const auto rounded = [exponent](const Dyadic& x) {
+    Integer units;
+    arf_get_fmpz(units, x.shifted(-exponent).raw(), ARF_RND_NEAR);
+    return Dyadic::scaled(units, exponent);
+  };
+  const ComplexDyadic centre = centre_of(box);
+  return {rounded(centre.re), rounded(centre.im)};
 }
 
 bool proves_outside(const Rule& rule) {
@@ -110,8 +115,10 @@ Probe RegionSearch::probe(const OpenCell& open) {
   // what is left open by a short probe is cut, and longer probes follow
   const std::uint64_t iterations = std::min(kProbeIterations, kFirstProbeIterations << open.depth);
   const ProbeEffort effort{std::min(options_.limits.iterations, iterations), bits_, uses_discs()};
-  if (open.at.lane) return probe_in_double(open.at.lane->x, open.at.lane->y, effort, deadline_);
-  return probe_in_balls(centre_of(open.at.box), effort, deadline_);
+  const ComplexDyadic at = short_centre_of(open.at.box);
+  if (open.at.lane)
+    return probe_in_double(arf_get_d(at.re.raw(), ARF_RND_NEAR), arf_get_d(at.im.raw(), ARF_RND_NEAR), effort, deadline_);
+  return probe_in_balls(at, effort, deadline_);
 }
 
 // Of some parameters of the box the one that escapes first, as it seems, is proved to escape.
@@ -136,6 +143,7 @@ void RegionSearch::look_for_member(const Region& region) {
   ++member_searches_;
   RootHunt hunt;
   hunt.iterations = std::min(options_.limits.iterations, hunt.iterations);
+  hunt.misiurewicz = options_.rules == Rules::all;
   const std::vector<Claim> found = find_roots(region, hunt, deadline_);
   if (!found.empty() && is_within(shape_of(found.front().region), inner_)) member_ = found.front();
 }
@@ -197,6 +205,7 @@ RegionVerdict RegionSearch::run() {
     ran_out_of_bits_ = true;
     return undecided();
   }
+  if (const auto form = closed_form_of(bounds_.outer)) return {Proof{Inside{}, *form}, bounds_.outer};
   for (const bool lanes : {true, false}) {
     if (lanes && !(rounds_to_nearest() && size_exponent(whole_) > kSmallestLane)) continue;
     lanes_ = lanes;
@@ -249,15 +258,16 @@ RegionVerdict RegionSearch::settled() const {
       if (auto proof = count(region)) return {*proof, region};
     return {Proof{Outside{}, rule}, region};
   }
-  const ClosedForm form{static_cast<std::uint32_t>(first_period(rule))};
-  const bool has_form = form.period == 1 || form.period == 2;
-  if (has_form && std::holds_alternative<Established>(rules::closed_form_inside(region, form)))
-    return {Proof{Inside{}, form}, region};
   return {Proof{Inside{}, rule}, region};
 }
 
 RegionVerdict RegionSearch::undecided() const {
-  const Limit limit = ran_out_of_time_ ? Limit::time : ran_out_of_bits_ ? Limit::precision : Limit::cells;
+  const bool out_of_cells = cells_.count() + 4 > options_.limits.cells;
+  const Limit limit = ran_out_of_time_   ? Limit::time
+                      : ran_out_of_bits_ ? Limit::precision
+                      : out_of_cells     ? Limit::cells
+                      : is_blind() && options_.limits.iterations < kProbeIterations ? Limit::iterations
+                                         : Limit::depth;
   return {Undecided{limit, std::min(options_.limits.iterations, kProbeIterations), bits_, cells_.count()}, bounds_.outer};
 }
 

@@ -49,7 +49,7 @@ Roots roots_in(const RootEquation& equation, const Disc& disc, slong bits) {
 }
 
 // A disc that contains the box, a little larger than needed, so that a root on the rim of a cell is inside for both cells.
-Disc around(const Box& box) {
+Disc surroundings(const Box& box) {
   const Dyadic width = box.hi.re - box.lo.re, height = box.hi.im - box.lo.im;
   return {centre_of(box), std::max(width, height).shifted(-1) + std::max(width, height).shifted(-2)};
 }
@@ -77,7 +77,7 @@ class Isolation {
  private:
   // A cell smaller than the discs of roots will not be settled by cutting it further.
   bool is_settled(const Box& cell) {
-    const Disc disc = around(cell);
+    const Disc disc = surroundings(cell);
     const slong size = size_exponent(cell);
     const slong bits = 64 - 2 * std::min<slong>(size, 0);
     const Roots roots = roots_in(equation_, disc, bits);
@@ -95,13 +95,12 @@ class Isolation {
     arf_set(start.re, disc.centre.re.raw());
     arf_set(start.im, disc.centre.im.raw());
     auto root = approx_root(equation_, start, bits, deadline_);
-    if (!root) return false;
+    // only a root in this disc is the one that it has; Newton's method may lead to another
+    if (!root || !is_within(shape_of(Region(around(*root))), shape_of(Region(disc)))) return false;
     if (is_of_lesser_type(*root, bits)) return true;
     const auto claim = prove(*root, bits);
     if (!claim) return false;
     const Disc& place = std::get<Disc>(claim->region);
-    // the root in the small disc is the one in the large disc, if that contains it
-    if (!is_within(shape_of(Region(place)), shape_of(Region(disc)))) return false;
     if (are_disjoint(bounding_rectangle(Region(place)), region_)) return true;
     if (!is_within(shape_of(Region(place)), region_)) {
       found_.is_complete = false;  // on the rim
@@ -109,6 +108,13 @@ class Isolation {
     }
     keep(*claim);
     return true;
+  }
+
+  // Contains the disc that is proved, whose centre may be moved to the real axis.
+  Disc around(const ApproxParameter& root) const {
+    Integer three;
+    fmpz_set_ui(three, 3);
+    return {{Dyadic(root.re.raw()), Dyadic(root.im.raw())}, Dyadic::scaled(three, -limits_.places)};
   }
 
   // Lemma P2 for the lesser types: shorter periods, and for Misiurewicz points nuclei.

@@ -59,7 +59,7 @@ constexpr std::size_t kHuntedCells = 21;  // the region, its quarters, and their
 
 class Locating {
  public:
-  Locating(const Shape& region, const LocateOptions& options, const std::function<void(const LocatedType&)>& take)
+  Locating(const Shape& region, const LocateOptions& options, const std::function<bool(const LocatedType&)>& take)
       : region_(region), options_(options), take_(take), deadline_(options.seconds), outer_(bound_region(region).outer),
         isolation_(options.isolation), ranges_(outer_, options.max_period, 64 - 2 * std::min<slong>(size_exponent(outer_), 0)) {
     isolation_.places = std::max(isolation_.places, kPlacesBeyondSize - size_exponent(outer_));
@@ -85,7 +85,8 @@ class Locating {
  private:
   bool wants_nuclei() const { return options_.nuclei && nuclei_ < options_.most; }
   bool wants_others() const { return options_.misiurewicz && others_ < options_.most; }
-  bool wants_more() { return (wants_nuclei() || wants_others()) && !deadline_.passed_now(); }
+  bool wants_more() { return (wants_nuclei() || wants_others()) && !stopped_ && !deadline_.passed_now(); }
+  void give(const LocatedType& found) { stopped_ |= !take_(found); }
 
   // Beyond the extent: what Newton's method finds from the centres of the region and of the cells it is cut into.
   void hunt(const LocatedExtent& extent) {
@@ -113,7 +114,7 @@ class Locating {
       if (known.statement == claim.statement && !are_disjoint(place, shape_of(known.region))) return;
     hunted_.push_back(claim);
     ++(nucleus != nullptr ? nuclei_ : others_);
-    take_({claim.statement, {{claim}, false}});
+    give({claim.statement, {{claim}, false}});
   }
 
   // False when it ended before all types with this index were looked for.
@@ -126,27 +127,28 @@ class Locating {
   }
 
   std::uint64_t look_for(const RootEquation& equation) {
-    if (!ranges_.possibly_vanishes(equation) || deadline_.passed()) return 0;
+    if (stopped_ || !ranges_.possibly_vanishes(equation) || deadline_.passed()) return 0;
     LocatedType found{equation.type(), isolate_roots(equation, region_, isolation_, deadline_)};
-    if (!found.roots.claims.empty() || !found.roots.is_complete) take_(found);
+    if (!found.roots.claims.empty() || !found.roots.is_complete) give(found);
     return found.roots.claims.size();
   }
 
   const Shape& region_;
   const LocateOptions& options_;
-  const std::function<void(const LocatedType&)>& take_;
+  const std::function<bool(const LocatedType&)>& take_;
   Deadline deadline_;
   Region outer_;
   IsolationLimits isolation_;
   Ranges ranges_;
   std::vector<Claim> hunted_;
+  bool stopped_ = false;  // by the receiver
   std::uint64_t nuclei_ = 0, others_ = 0;
 };
 
 }  // namespace
 
 LocatedExtent locate(const Shape& region, const LocateOptions& options,
-                     const std::function<void(const LocatedType&)>& take) {
+                     const std::function<bool(const LocatedType&)>& take) {
   return Locating(region, options, take).run();
 }
 

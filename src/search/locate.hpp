@@ -28,8 +28,10 @@ struct LocatedExtent {
 };
 
 /// Finds the nuclei and Misiurewicz points that the region contains, in the order of the period, and of preperiod plus
-/// period. `take` is given each type that has roots in the region, or may have as far as is proved. In a small region, whose
-/// first roots have long periods, those beyond the extent that is returned are found by Newton's method alone.
-LocatedExtent locate(const Shape& region, const LocateOptions& options, const std::function<void(const LocatedType&)>& take);
+/// period. `take` is given each type that has roots in the region, or may have as far as is proved, and says whether to go
+/// on. In a small region, whose first roots have long periods, those beyond the extent that is returned are found by
+/// Newton's method alone.
+LocatedExtent locate(const Shape& region, const LocateOptions& options,
+                     const std::function<bool(const LocatedType&)>& take);
 
 }  // namespace merestone

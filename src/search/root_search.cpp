@@ -134,11 +134,12 @@ void keep_near(std::vector<Candidate>& kept, const ScaledOrbit& orbit, std::size
 }
 
 // Nuclei first, the least periods first.
-std::vector<Candidate> candidates(const ScaledOrbit& orbit, std::size_t trials) {
+std::vector<Candidate> candidates(const ScaledOrbit& orbit, const RootHunt& hunt) {
   std::vector<Candidate> nuclei, others;
-  for (std::size_t n = 1; n < orbit.z.size() && nuclei.size() < trials; ++n) keep_near(nuclei, orbit, 0, n);
-  for (std::size_t n = 2; n < std::min(orbit.z.size(), kMostPairs) && others.size() < trials; ++n)
-    for (std::size_t m = 1; m < n && others.size() < trials; ++m) keep_near(others, orbit, m, n);
+  for (std::size_t n = 1; n < orbit.z.size() && nuclei.size() < hunt.trials; ++n) keep_near(nuclei, orbit, 0, n);
+  const std::size_t most = hunt.misiurewicz ? std::min(orbit.z.size(), kMostPairs) : 0;
+  for (std::size_t n = 2; n < most && others.size() < hunt.trials; ++n)
+    for (std::size_t m = 1; m < n && others.size() < hunt.trials; ++m) keep_near(others, orbit, m, n);
   nuclei.insert(nuclei.end(), others.begin(), others.end());
   return nuclei;
 }
@@ -220,7 +221,7 @@ std::vector<Claim> find_roots(const Region& region, const RootHunt& hunt, Deadli
   const ApproxParameter centre = centre_of(region);
   const Shape shape = shape_of(region);
   std::vector<Claim> found;
-  for (const Candidate& candidate : candidates(orbit_around(centre, size, bits, hunt.iterations), hunt.trials)) {
+  for (const Candidate& candidate : candidates(orbit_around(centre, size, bits, hunt.iterations), hunt)) {
     if (deadline.passed_now() || found.size() == hunt.most) break;
     const auto start = good_start(candidate.equation, centre, size);
     const auto root = start ? approx_root(candidate.equation, *start, bits, deadline) : std::nullopt;

@@ -37,6 +37,7 @@ struct RootHunt {
   std::uint64_t iterations = 20'000;  // largest index in an equation
   std::size_t trials = 4;             // equations that are tried, of nuclei and of Misiurewicz points
   std::size_t most = 1;               // roots that are wanted
+  bool misiurewicz = true;            // nuclei alone otherwise
   std::optional<slong> places;        // of each root's disc; by default 32 more than the region's size has
 };
 

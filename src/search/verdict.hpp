@@ -14,8 +14,8 @@ struct SearchLimits {
   std::uint64_t cells = 20'000;           // into which a region is cut
 };
 
-/// Which rules the search may use: elementary ones need nothing but arithmetic, the radius-2 criterion and attracting
-/// cycles; the others rest on the theory of univalent functions.
+/// Which rules the search may use: elementary ones need nothing but arithmetic, the radius-2 criterion, attracting
+/// cycles and nuclei; the others rest on the theory of univalent functions, or on that of repelling cycles.
 enum class Rules { all, elementary };
 
 struct DecideOptions {
@@ -33,7 +33,7 @@ struct Proof {
   Rule by;
 };
 
-enum class Limit { iterations, precision, time, cells };
+enum class Limit { iterations, precision, time, cells, depth };
 
 /// Nothing was proved; which limit ended the attempt, and where it stood.
 struct Undecided {

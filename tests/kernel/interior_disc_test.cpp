@@ -229,7 +229,7 @@ TEST_CASE("a region is inside by the rule exactly when it lies in the disc") {
   CHECK_FALSE(inside(claims::point({d.re, d.im + r + power_of_two(-200)})));
   const merestone::Outcome result = claims::outcome(claims::claim(merestone::Inside{}, claims::disc(d, r), by));
   const auto& shown = std::get<merestone::Established>(result);
-  CHECK(shown.lemmas == std::vector<std::string>{"I2", "U1", "B1"});
+  CHECK(shown.lemmas == std::vector<std::string>{"I2", "U1", "I1", "B1"});
   REQUIRE(shown.figures.size() == 3);
   CHECK(reference::exact(*shown.figures[2].upper) == r);
 }

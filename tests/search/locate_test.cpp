@@ -26,10 +26,11 @@ Located located(const std::string& text, const LocateOptions& o) {
   all.extent = locate(region, o, [&](const LocatedType& type) {
     if (const auto* nucleus = std::get_if<Nucleus>(&type.type)) {
       REQUIRE(all.nuclei.emplace(nucleus->period, type.roots).second);
-      return;
+      return true;
     }
     const auto& point = std::get<Misiurewicz>(type.type);
     REQUIRE(all.others.emplace(std::pair{point.preperiod, point.period}, type.roots).second);
+    return true;
   });
   return all;
 }

@@ -68,7 +68,9 @@ bool is_elementary(const Rule& rule) {
     return std::all_of(by->rules.begin(), by->rules.end(), is_elementary);
   if (const auto* by = std::get_if<Witnesses>(&rule))
     return std::all_of(by->claims.begin(), by->claims.end(),
-                       [](const Claim& claim) { return is_elementary(claim.by); });
+                       [](const Claim& claim) {
+                         return !std::holds_alternative<Misiurewicz>(claim.statement) && is_elementary(claim.by);
+                       });
   return std::holds_alternative<Escape>(rule) || std::holds_alternative<AttractingDisc>(rule) ||
          std::holds_alternative<ClosedForm>(rule) || std::holds_alternative<IsolatedRoot>(rule);
 }

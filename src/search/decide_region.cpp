@@ -8,6 +8,7 @@
 #include "search/approx_escape.hpp"
 #include "search/cell_rule.hpp"
 #include "search/closed_form_region.hpp"
+#include "search/grid.hpp"
 #include "search/region_cells.hpp"
 #include "search/root_search.hpp"
 
@@ -33,13 +34,8 @@ struct OpenCell {
 ComplexDyadic short_centre_of(const Box& box) {
   constexpr slong kBitsOfSize = 10;
   const slong exponent = size_exponent(box) - kBitsOfSize;
-  const auto rounded = [exponent](const Dyadic& x) {
-    Integer units;
-    arf_get_fmpz(units, x.shifted(-exponent).raw(), ARF_RND_NEAR);
-    return Dyadic::scaled(units, exponent);
-  };
   const ComplexDyadic centre = centre_of(box);
-  return {rounded(centre.re), rounded(centre.im)};
+  return {nearest_on_grid(centre.re, exponent), nearest_on_grid(centre.im, exponent)};
 }
 
 bool proves_outside(const Rule& rule) {

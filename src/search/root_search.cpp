@@ -6,6 +6,7 @@
 
 #include "kernel/check.hpp"
 #include "kernel/dispatch.hpp"
+#include "search/grid.hpp"
 #include "search/region_bounds.hpp"
 
 namespace merestone {
@@ -209,7 +210,9 @@ std::optional<ApproxParameter> approx_root(const RootEquation& equation, const A
 std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParameter& root, slong places, slong bits) {
   Integer one;
   fmpz_one(one);
-  const Disc disc{{Dyadic(root.re.raw()), Dyadic(root.im.raw())}, Dyadic::scaled(one, -places)};
+  constexpr slong kBitsOfRadius = 6;  // the rounded centre is so much nearer to the root than the rim
+  const auto rounded = [places](const Arf& x) { return nearest_on_grid(Dyadic(x.raw()), -places - kBitsOfRadius); };
+  const Disc disc{{rounded(root.re), rounded(root.im)}, Dyadic::scaled(one, -places)};
   Claim claim{equation.type(), disc, std::nullopt, IsolatedRoot{static_cast<std::uint32_t>(bits)}};
   if (!std::holds_alternative<Established>(establish_by(claim.statement, claim.region, claim.by))) return std::nullopt;
   return claim;

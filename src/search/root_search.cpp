@@ -214,7 +214,11 @@ std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParame
   const auto rounded = [places](const Arf& x) { return nearest_on_grid(Dyadic(x.raw()), -places - kBitsOfRadius); };
   const Disc disc{{rounded(root.re), rounded(root.im)}, Dyadic::scaled(one, -places)};
   Claim claim{equation.type(), disc, std::nullopt, IsolatedRoot{static_cast<std::uint32_t>(bits)}};
-  if (!std::holds_alternative<Established>(establish_by(claim.statement, claim.region, claim.by))) return std::nullopt;
+  const Outcome outcome = establish_by(claim.statement, claim.region, claim.by);
+  const auto* established = std::get_if<Established>(&outcome);
+  if (established == nullptr) return std::nullopt;
+  // the figure is the root's distance from the centre: two discs whose centres are near have one root
+  if (!(*established->figures.front().upper < disc.radius.shifted(-2))) return std::nullopt;
   return claim;
 }
 

@@ -29,7 +29,7 @@ std::optional<ApproxParameter> approx_root(const RootEquation& equation, const A
                                            Deadline& deadline);
 
 /// The claim that a disc of about the radius 2^-places about the approximation, exactly one root of its exact type in it
-/// (Lemma P2), established by the kernel. The approximation is good to about 2 `places` bits.
+/// (Lemma P2) within a quarter of the radius of the centre, established by the kernel. The approximation is good to about 2 `places` bits.
 std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParameter& root, slong places, slong bits);
 
 /// How far roots are looked for along the orbit of a region's centre.

@@ -42,6 +42,14 @@ bool proves_outside(const Rule& rule) {
   return std::holds_alternative<ExteriorDisc>(rule) || std::holds_alternative<Escape>(rule);
 }
 
+// One disc settles a typed disc although it does not contain its bounding box.
+bool covers_disc(const Probe& probe, const Region& region) {
+  if (!std::holds_alternative<Disc>(region)) return false;
+  if (!probe.circle) return probe.disc && is_within(shape_of(region), shape_of(Region(*probe.disc)));
+  const auto [x, y, radius] = *probe.circle;
+  return is_within(shape_of(region), shape_of(Region(Disc{{Dyadic(x), Dyadic(y)}, Dyadic(radius)})));
+}
+
 class RegionSearch {
  public:
   RegionSearch(const RegionBounds& bounds, const DecideOptions& options)
@@ -60,6 +68,10 @@ class RegionSearch {
   void cut_and_settle();
   bool all_settled() const {
     return queue_.empty() && unsettled_ == 0 && (settled_outside_ == 0 || settled_inside_ == 0);
+  }
+  /// A member and a parameter outside have been met, or a Misiurewicz point, which shows both.
+  bool has_witnesses() const {
+    return member_ && (outside_ || std::holds_alternative<Misiurewicz>(member_->statement));
   }
   /// Does the arithmetic in use decide too few parameters?
   bool is_blind() const { return blind_ > kMostBlindProbes; }
@@ -144,14 +156,6 @@ void RegionSearch::look_for_member(const Region& region) {
   if (!found.empty() && is_within(shape_of(found.front().region), inner_)) member_ = found.front();
 }
 
-// One disc settles a typed disc although it does not contain its bounding box.
-bool covers_disc(const Probe& probe, const Region& region) {
-  if (!std::holds_alternative<Disc>(region)) return false;
-  if (!probe.circle) return probe.disc && is_within(shape_of(region), shape_of(Region(*probe.disc)));
-  const auto [x, y, radius] = *probe.circle;
-  return is_within(shape_of(region), shape_of(Region(Disc{{Dyadic(x), Dyadic(y)}, Dyadic(radius)})));
-}
-
 std::optional<Rule> RegionSearch::settle_by_probe(const Probe& probe, const OpenCell& open) const {
   if (probe.by && certainly_covers(probe, open.at)) return probe.by;
   if (probe.by && open.cell == RegionCells::kWhole && covers_disc(probe, bounds_.outer)) return probe.by;
@@ -184,7 +188,7 @@ void RegionSearch::take(OpenCell open) {
   }
   look_for_outside(open);
   look_for_member(open.at.box);
-  if (member_ && outside_) return;
+  if (has_witnesses()) return;
   if (open.depth == (open.at.lane ? kDeepestRule : kDeepestInBalls) || cells_.count() + 4 > options_.limits.cells) {
     ++unsettled_;
     return;
@@ -206,7 +210,7 @@ RegionVerdict RegionSearch::run() {
     if (lanes && !(rounds_to_nearest() && size_exponent(whole_) > kSmallestLane)) continue;
     lanes_ = lanes;
     cut_and_settle();
-    if (member_ && outside_) return straddles();
+    if (has_witnesses()) return straddles();
     if (all_settled()) return settled();
     if (ran_out_of_time_ || !is_blind()) break;
   }
@@ -219,7 +223,7 @@ void RegionSearch::cut_and_settle() {
   around_.clear();
   unsettled_ = settled_outside_ = settled_inside_ = blind_ = 0;
   queue_ = {opened(whole_, RegionCells::kWhole, 0, kNone)};
-  while (!queue_.empty() && !(member_ && outside_) && !(lanes_ && is_blind())) {
+  while (!queue_.empty() && !has_witnesses() && !(lanes_ && is_blind())) {
     if (deadline_.passed_now()) {
       ran_out_of_time_ = true;
       break;

@@ -18,6 +18,7 @@ namespace {
 
 constexpr slong kSmallestLane = -44;              // binary exponent of the size of regions that double precision takes
 constexpr std::uint64_t kProbeIterations = 20'000, kFirstProbeIterations = 1'000;
+constexpr std::uint64_t kStepsOfRadius = 64;      // within which a cell escapes as a whole
 constexpr int kDeepestInBalls = 4;                // disc enclosures cost a thousand times as much as a lane
 constexpr std::size_t kMostBlindProbes = 40;       // before disc enclosures take over
 constexpr int kMostMemberSearches = 12;
@@ -78,6 +79,7 @@ class RegionSearch {
   OpenCell opened(const Box& box, std::size_t cell, int depth, std::size_t around) const;
   bool uses_discs() const { return options_.rules == Rules::all; }
   std::optional<Rule> settled_by_earlier(const OpenCell& open) const;
+  std::optional<Rule> settle_by_radius(const OpenCell& open);
   std::optional<Rule> settle(OpenCell& open);
   std::optional<Rule> settle_by_probe(const Probe& probe, const OpenCell& open) const;
   Probe probe(const OpenCell& open);
@@ -159,12 +161,29 @@ void RegionSearch::look_for_member(const Region& region) {
 std::optional<Rule> RegionSearch::settle_by_probe(const Probe& probe, const OpenCell& open) const {
   if (probe.by && certainly_covers(probe, open.at)) return probe.by;
   if (probe.by && open.cell == RegionCells::kWhole && covers_disc(probe, bounds_.outer)) return probe.by;
-  // where there is no exterior disc, or a poor one: far from M
-  if (uses_discs() && !(probe.is_outside() && (open.at.lane || !probe.by))) return std::nullopt;
+  // without a lane the criterion has not been tried, and far from M there is no exterior disc
+  if (uses_discs() && !(probe.is_outside() && !probe.by)) return std::nullopt;
   return elementary_rule(probe, open.at, bits_);
 }
 
+// The cheapest rule first: the radius-2 criterion over the whole cell costs a fifteenth of an exterior disc and settles
+// nearly as much that is not close to M (docs/performance.md).
+std::optional<Rule> RegionSearch::settle_by_radius(const OpenCell& open) {
+  if (!open.at.lane) return std::nullopt;
+  const auto& lane = *open.at.lane;
+  const RegionEscape whole = region_escape({lane.x, lane.y, lane.reach_upper()},
+                                           std::min(options_.limits.iterations, kStepsOfRadius));
+  if (whole.index == 0) return std::nullopt;
+  const Rule rule = Escape{whole.index, kDoubleBits};
+  Probe centre;
+  centre.at = short_centre_of(open.at.box);
+  centre.point = Proof{Outside{}, rule};
+  take_witness(centre);
+  return rule;
+}
+
 std::optional<Rule> RegionSearch::settle(OpenCell& open) {
+  if (auto rule = settle_by_radius(open)) return rule;
   if (auto rule = settled_by_earlier(open)) return rule;
   Probe found = probe(open);
   if (!found.point) {

@@ -16,8 +16,8 @@ namespace merestone::bench {
 
 namespace {
 
-constexpr std::size_t kPlainCells = 20'000;
-constexpr std::size_t kPlainBoxes = 40;  // the first of them: subdivision takes seconds for one
+constexpr std::size_t kPlainCells = 2'000;
+constexpr std::size_t kPlainBoxes = 15;  // the first of them: subdivision takes seconds for one
 
 // Runs the work on every box of the side; shares of the verdicts, and the median time of a box in microseconds.
 template <class Work>

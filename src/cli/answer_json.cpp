@@ -2,7 +2,7 @@
 
 #include "cli/answer.hpp"
 #include "cli/enclosure_text.hpp"
-#include "cli/proof_words.hpp"
+#include "cli/shared_pieces.hpp"
 #include "format/claim_json.hpp"
 #include "format/names.hpp"
 #include "format/spelling.hpp"
@@ -43,7 +43,7 @@ struct AddHints {
     json["witnesses"] = Json::array();
     for (const Claim& witness : by.claims) json["witnesses"].push_back(Json::parse(to_json(witness).dump()));
   }
-  void operator()(const Quarters& by) const { json["pieces"] = pieces_of(by); }
+  void operator()(const Quarters& by) const { json["pieces"] = pieces_of(by).all; }
 };
 
 void add_rule(Json& json, const Rule& rule) {

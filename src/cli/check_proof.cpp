@@ -2,9 +2,7 @@
 
 #include <fmt/format.h>
 
-#include <algorithm>
-
-#include "cli/check_pieces.hpp"
+#include "cli/shared_pieces.hpp"
 #include "cli/check_statement.hpp"
 #include "format/shown.hpp"
 #include "kernel/primes.hpp"
@@ -139,9 +137,7 @@ std::string Proof::operator()(const InteriorDisc& by) const {
 
 std::string Proof::root_of_nucleus(std::uint64_t period) const {
   std::string others;
-  std::vector<std::uint64_t> shorter = proper_prime_cofactors(period);
-  std::sort(shorter.begin(), shorter.end());
-  for (const std::uint64_t q : shorter) others += ", " + formula(n_.z(q) + n_.differs() + "0");
+  for (const std::uint64_t q : ascending_prime_cofactors(period)) others += ", " + formula(n_.z(q) + n_.differs() + "0");
   return fmt::format(
       "the equation {} has exactly one solution {} in the disc{}", formula(n_.z(period) + " = 0"), n_.c(),
       others.empty() ? "" : ", throughout which moreover" + others.substr(1) + ", so that the period is exact");
@@ -150,9 +146,7 @@ std::string Proof::root_of_nucleus(std::uint64_t period) const {
 std::string Proof::root_of_misiurewicz(const Misiurewicz& type) const {
   const auto [k, p] = type;
   std::string others = formula(n_.z(k - 1) + n_.differs() + "0");
-  std::vector<std::uint64_t> shorter = proper_prime_cofactors(p);
-  std::sort(shorter.begin(), shorter.end());
-  for (const std::uint64_t q : shorter) others += ", " + formula(n_.z(k + q) + n_.differs() + n_.z(k));
+  for (const std::uint64_t q : ascending_prime_cofactors(p)) others += ", " + formula(n_.z(k + q) + n_.differs() + n_.z(k));
   return fmt::format(
       "the equation {} has exactly one solution {} in the disc, throughout which moreover {}, so that preperiod and "
       "period "

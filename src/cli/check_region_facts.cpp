@@ -2,11 +2,9 @@
 
 #include <fmt/format.h>
 
-#include <algorithm>
-
 #include "cli/check_margin.hpp"
 #include "cli/check_number_words.hpp"
-#include "cli/check_pieces.hpp"
+#include "cli/shared_pieces.hpp"
 #include "format/shown.hpp"
 #include "kernel/primes.hpp"
 
@@ -29,10 +27,8 @@ Fact in_proved_disc(const Claim& claim, const Established& established, std::str
 
 // "z_1 != 0", "z_3 != z_2" for each shorter period that is excluded
 std::string excluded(std::uint64_t period, std::uint64_t preperiod) {
-  std::vector<std::uint64_t> shorter = proper_prime_cofactors(period);
-  std::sort(shorter.begin(), shorter.end());
   std::string text;
-  for (const std::uint64_t q : shorter)
+  for (const std::uint64_t q : ascending_prime_cofactors(period))
     text += fmt::format("{}z_{} != {}", text.empty() ? "" : ", ", preperiod + q,
                         preperiod == 0 ? "0" : fmt::format("z_{}", preperiod));
   return text;

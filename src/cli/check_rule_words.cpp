@@ -3,7 +3,7 @@
 #include <fmt/format.h>
 
 #include "cli/check_number_words.hpp"
-#include "cli/check_pieces.hpp"
+#include "cli/shared_pieces.hpp"
 #include "cli/check_words.hpp"
 #include "format/names.hpp"
 #include "format/shown.hpp"

@@ -1,5 +1,7 @@
 #include "cli/decide_certificate.hpp"
 
+#include <fmt/format.h>
+
 #include "format/certificate.hpp"
 #include "format/container_layout.hpp"
 
@@ -18,6 +20,14 @@ Failure too_many(const std::string& path) {
 }
 
 }  // namespace
+
+std::string written_line(const WrittenCertificate& written, bool json) {
+  if (json)
+    return nlohmann::ordered_json{{"certificate", written.path}, {"claims", written.claims},
+                                  {"claims_digest", written.digest}}.dump() + "\n";
+  return fmt::format("{}: {} {}, claims-digest {}\n", written.path, written.claims,
+                     written.claims == 1 ? "claim" : "claims", written.digest);
+}
 
 std::optional<Failure> check_certificate_name(const std::string& path) {
   if (ends_in(path, kContainerEnding) || ends_in(path, kDocumentEnding)) return std::nullopt;

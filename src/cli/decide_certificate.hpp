@@ -15,6 +15,9 @@ struct WrittenCertificate {
   std::string digest;
 };
 
+/// The line that says so: a JSON object, or words. Ends in a newline.
+std::string written_line(const WrittenCertificate& written, bool json);
+
 /// Refuses names that do not say which form of certificate is meant.
 std::optional<Failure> check_certificate_name(const std::string& path);
 

@@ -140,12 +140,7 @@ void DecideRun::finish_certificate() {
     const bool nothing_to_write = code_ != ExitCode::established;
     return fail(nothing_to_write ? code_ : ExitCode::io_failed, written.failure().message);
   }
-  if (words_.json)
-    output_.write(nlohmann::ordered_json{{"certificate", written->path}, {"claims", written->claims},
-                                         {"claims_digest", written->digest}}.dump() + "\n");
-  else if (!words_.quiet)
-    output_.write(fmt::format("{}: {} {}, claims-digest {}\n", written->path, written->claims,
-                              written->claims == 1 ? "claim" : "claims", written->digest));
+  if (words_.json || !words_.quiet) output_.write(written_line(*written, words_.json));
 }
 
 void DecideRun::finish() {

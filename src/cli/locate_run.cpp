@@ -148,12 +148,7 @@ class LocateRun {
                     words_.out + ": not written, since nothing was found");
     const Result<WrittenCertificate> written = file_->finish();
     if (!written) return report(ExitCode::io_failed, written.failure().message);
-    if (words_.json)
-      output_.write(Json{{"certificate", written->path}, {"claims", written->claims},
-                         {"claims_digest", written->digest}}.dump() + "\n");
-    else
-      output_.write(fmt::format("{}: {} {}, claims-digest {}\n", written->path, written->claims,
-                                written->claims == 1 ? "claim" : "claims", written->digest));
+    output_.write(written_line(*written, words_.json));
   }
 
   void give_up_file(const std::string& message) {

@@ -2,6 +2,7 @@
 
 #include <fmt/format.h>
 
+#include "cli/shared_pieces.hpp"
 #include "kernel/overloaded.hpp"
 #include "search/verdict.hpp"
 
@@ -16,15 +17,6 @@ std::string arithmetic_in_words(std::uint32_t bits, const char* lemma, const cha
 
 }  // namespace
 
-std::size_t pieces_of(const Quarters& quarters) {
-  std::size_t all = 0;
-  for (const Rule& rule : quarters.rules) {
-    const auto* inner = std::get_if<Quarters>(&rule);
-    all += inner != nullptr ? pieces_of(*inner) : 1;
-  }
-  return all;
-}
-
 std::string proof_in_words(const Rule& rule) {
   return std::visit(
       Overloaded{[](const Escape& by) { return "escape " + arithmetic_in_words(by.bits, "E1"); },
@@ -38,7 +30,7 @@ std::string proof_in_words(const Rule& rule) {
                  },
                  [](const IsolatedRoot& by) { return "isolated root " + arithmetic_in_words(by.bits, "P2"); },
                  [](const Witnesses&) { return std::string("its witnesses (P3)"); },
-                 [](const Quarters& by) { return fmt::format("{} pieces, each by a rule of its own (N1)", pieces_of(by)); }},
+                 [](const Quarters& by) { return fmt::format("{} pieces, each by a rule of its own (N1)", pieces_of(by).all); }},
       rule);
 }
 

@@ -8,7 +8,4 @@ namespace merestone {
 /// The rule and its arithmetic in a few words, with the lemmas: "escape over disc enclosures of 64 bits (E1, E2)".
 std::string proof_in_words(const Rule& rule);
 
-/// How many pieces the rules of a cut box settle.
-std::size_t pieces_of(const Quarters& quarters);
-
 }  // namespace merestone

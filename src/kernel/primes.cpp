@@ -1,5 +1,7 @@
 #include "kernel/primes.hpp"
 
+#include <algorithm>
+
 namespace merestone {
 
 std::vector<std::uint64_t> proper_prime_cofactors(std::uint64_t n) {
@@ -11,6 +13,12 @@ std::vector<std::uint64_t> proper_prime_cofactors(std::uint64_t n) {
     while (rest % q == 0) rest /= q;
   }
   if (rest > 1) cofactors.push_back(n / rest);
+  return cofactors;
+}
+
+std::vector<std::uint64_t> ascending_prime_cofactors(std::uint64_t n) {
+  std::vector<std::uint64_t> cofactors = proper_prime_cofactors(n);
+  std::reverse(cofactors.begin(), cofactors.end());  // they come by ascending prime
   return cofactors;
 }
 

@@ -8,4 +8,7 @@ namespace merestone {
 /// Requires n >= 1; empty for 1.
 std::vector<std::uint64_t> proper_prime_cofactors(std::uint64_t n);
 
+/// The same, the least first: in the order in which an orbit meets them.
+std::vector<std::uint64_t> ascending_prime_cofactors(std::uint64_t n);
+
 }  // namespace merestone

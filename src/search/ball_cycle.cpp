@@ -1,6 +1,7 @@
 #include "search/ball_cycle.hpp"
 
 #include "kernel/rules/rules.hpp"
+#include "search/approx_ball.hpp"
 
 namespace merestone {
 
@@ -43,14 +44,6 @@ class ApproxReturn {
   Acb c_;
 };
 
-// The exponent e with |z| < 2^e, roughly; very small for zero.
-slong approx_exponent(const Acb& z) {
-  Mag size;
-  acb_get_mag(size, z);
-  if (mag_is_zero(size)) return WORD_MIN / 4;
-  return fmpz_get_si(MAG_EXPREF(size.raw()));
-}
-
 // Newton's method on f^period(z) - z; false when it does not settle.
 bool approx_fixed_point(const ApproxReturn& f, Acb& z, std::uint64_t period, Deadline& deadline) {
   constexpr int kMostSteps = 64;
@@ -82,10 +75,6 @@ std::uint64_t approx_least_period(const ApproxReturn& f, const Acb& z, std::uint
   return period;
 }
 
-ComplexDyadic midpoint(const Acb& z) {
-  return {Dyadic(arb_midref(acb_realref(z.raw()))), Dyadic(arb_midref(acb_imagref(z.raw())))};
-}
-
 bool is_contracting(const ApproxReturn& f, const Acb& z, std::uint64_t period, Deadline& deadline) {
   Acb image, multiplier;
   Mag size;
@@ -112,7 +101,7 @@ std::optional<AttractingDisc> find_attracting_disc(const ComplexRational& c, con
   for (const int eighths : {6, 5, 4, 3, 2, 1}) {
     if (deadline.passed_now()) return std::nullopt;
     const long exponent = -static_cast<long>(bits) * eighths / 8;
-    const AttractingDisc candidate{period, {midpoint(z), Dyadic::scaled(one, exponent)}, bits};
+    const AttractingDisc candidate{period, {midpoint_of(z), Dyadic::scaled(one, exponent)}, bits};
     if (std::holds_alternative<Established>(rules::attracting_disc(Point{c}, candidate))) return candidate;
   }
   return std::nullopt;

@@ -4,7 +4,6 @@
 #include <optional>
 
 #include "kernel/orbit_enclosure.hpp"
-#include "kernel/primes.hpp"
 #include "search/region_bounds.hpp"
 
 namespace merestone {
@@ -91,10 +90,7 @@ class Isolation {
   // The one root in the disc: of the exact type or not, in the region or not. False when that is unclear.
   bool take_root(const Disc& disc) {
     const slong bits = 2 * limits_.places + 64;
-    ApproxParameter start;
-    arf_set(start.re, disc.centre.re.raw());
-    arf_set(start.im, disc.centre.im.raw());
-    auto root = approx_root(equation_, start, bits, deadline_);
+    const auto root = approx_root(equation_, disc.centre, bits, deadline_);
     // only a root in this disc is the one that it has; Newton's method may lead to another
     if (!root || !is_within(shape_of(Region(around(*root))), shape_of(Region(disc)))) return false;
     if (is_of_lesser_type(*root, bits)) return true;
@@ -111,14 +107,14 @@ class Isolation {
   }
 
   // Contains the disc that is proved, whose centre may be moved to the real axis.
-  Disc around(const ApproxParameter& root) const {
+  Disc around(const ComplexDyadic& root) const {
     Integer three;
     fmpz_set_ui(three, 3);
-    return {{Dyadic(root.re.raw()), Dyadic(root.im.raw())}, Dyadic::scaled(three, -limits_.places)};
+    return {root, Dyadic::scaled(three, -limits_.places)};
   }
 
   // Lemma P2 for the lesser types: shorter periods, and for Misiurewicz points nuclei.
-  bool is_of_lesser_type(const ApproxParameter& root, slong bits) const {
+  bool is_of_lesser_type(const ComplexDyadic& root, slong bits) const {
     const auto has_type = [&](const RootEquation& lesser) {
       return prove_root(lesser, root, limits_.places, bits).has_value();
     };
@@ -131,12 +127,9 @@ class Isolation {
     return false;
   }
 
-  std::optional<Claim> prove(const ApproxParameter& root, slong bits) const {
-    if (arf_cmpabs_2exp_si(root.im, -limits_.places) < 0) {
-      ApproxParameter real = root;
-      arf_zero(real.im);
-      if (auto claim = prove_root(equation_, real, limits_.places, bits)) return claim;
-    }
+  std::optional<Claim> prove(const ComplexDyadic& root, slong bits) const {
+    if (arf_cmpabs_2exp_si(root.im.raw(), -limits_.places) < 0)
+      if (auto claim = prove_root(equation_, {root.re, Dyadic()}, limits_.places, bits)) return claim;
     return prove_root(equation_, root, limits_.places, bits);
   }
 

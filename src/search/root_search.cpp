@@ -6,6 +6,7 @@
 
 #include "kernel/check.hpp"
 #include "kernel/dispatch.hpp"
+#include "search/approx_ball.hpp"
 #include "search/grid.hpp"
 #include "search/region_bounds.hpp"
 
@@ -15,24 +16,10 @@ namespace {
 
 using Complex = std::complex<double>;
 
-Acb as_ball(const ApproxParameter& c) {
-  Acb ball;
-  arb_set_arf(acb_realref(ball.raw()), c.re);
-  arb_set_arf(acb_imagref(ball.raw()), c.im);
-  return ball;
-}
-
-ApproxParameter midpoint_of(const Acb& ball) {
-  ApproxParameter c;
-  arf_set(c.re, arb_midref(acb_realref(ball.raw())));
-  arf_set(c.im, arb_midref(acb_imagref(ball.raw())));
-  return c;
-}
-
 // z_n and its derivative with respect to c, midpoints only.
 class ApproxJet {
  public:
-  ApproxJet(const ApproxParameter& c, slong bits) : c_(as_ball(c)), bits_(bits) {}
+  ApproxJet(const ComplexDyadic& c, slong bits) : c_(exact_ball(c)), bits_(bits) {}
 
   void step() {
     acb_mul(slope, slope, z, bits_);
@@ -53,14 +40,8 @@ class ApproxJet {
   slong bits_;
 };
 
-slong approx_exponent(const Acb& z) {
-  Mag size;
-  acb_get_mag(size, z);
-  return mag_is_zero(size) ? WORD_MIN / 4 : fmpz_get_si(MAG_EXPREF(size.raw()));
-}
-
 // Newton's correction g / g' at c; nothing when the orbit runs away.
-std::optional<Acb> correction(const RootEquation& equation, const ApproxParameter& c, slong bits, Deadline& deadline) {
+std::optional<Acb> correction(const RootEquation& equation, const ComplexDyadic& c, slong bits, Deadline& deadline) {
   ApproxJet jet(c, bits);
   Acb value, slope;
   while (jet.index < equation.late) {
@@ -101,7 +82,9 @@ Complex rounded(const Acb& value, slong shift) {
           arf_get_d(arb_midref(acb_imagref(scaled.raw())), ARF_RND_NEAR)};
 }
 
-Complex rounded(const ApproxParameter& c) { return {arf_get_d(c.re, ARF_RND_NEAR), arf_get_d(c.im, ARF_RND_NEAR)}; }
+Complex rounded(const ComplexDyadic& c) {
+  return {arf_get_d(c.re.raw(), ARF_RND_NEAR), arf_get_d(c.im.raw(), ARF_RND_NEAR)};
+}
 
 ScaledOrbit orbit_in_double(Complex c, double size, std::uint64_t most) {
   ScaledOrbit orbit;
@@ -113,7 +96,7 @@ ScaledOrbit orbit_in_double(Complex c, double size, std::uint64_t most) {
   return orbit;
 }
 
-ScaledOrbit orbit_around(const ApproxParameter& centre, slong size, slong bits, std::uint64_t most) {
+ScaledOrbit orbit_around(const ComplexDyadic& centre, slong size, slong bits, std::uint64_t most) {
   if (size > kSmallestInDouble) return orbit_in_double(rounded(centre), std::ldexp(1.0, static_cast<int>(size)), most);
   ScaledOrbit orbit;
   ApproxJet jet(centre, bits);
@@ -168,22 +151,11 @@ std::optional<Complex> approx_root_in_double(const RootEquation& equation, Compl
 }
 
 // A start from which Newton's method at high precision settles at once; nothing where it leads out of the region.
-std::optional<ApproxParameter> good_start(const RootEquation& equation, const ApproxParameter& centre, slong size) {
+std::optional<ComplexDyadic> good_start(const RootEquation& equation, const ComplexDyadic& centre, slong size) {
   if (size <= kSmallestInDouble) return centre;
   const auto root = approx_root_in_double(equation, rounded(centre), std::ldexp(1.0, static_cast<int>(size)));
   if (!root) return std::nullopt;
-  ApproxParameter start;
-  arf_set_d(start.re, root->real());
-  arf_set_d(start.im, root->imag());
-  return start;
-}
-
-ApproxParameter centre_of(const Region& region) {
-  const ComplexDyadic centre = merestone::centre_of(bounding_box(region));
-  ApproxParameter c;
-  arf_set(c.re, centre.re.raw());
-  arf_set(c.im, centre.im.raw());
-  return c;
+  return ComplexDyadic{Dyadic(root->real()), Dyadic(root->imag())};
 }
 
 }  // namespace
@@ -193,10 +165,10 @@ Statement RootEquation::type() const {
   return Misiurewicz{early + 1, late - early};
 }
 
-std::optional<ApproxParameter> approx_root(const RootEquation& equation, const ApproxParameter& start, slong bits,
+std::optional<ComplexDyadic> approx_root(const RootEquation& equation, const ComplexDyadic& start, slong bits,
                                            Deadline& deadline) {
   constexpr int kMostSteps = 40;
-  Acb c = as_ball(start);
+  Acb c = exact_ball(start);
   for (int step = 0; step < kMostSteps; ++step) {
     const auto change = correction(equation, midpoint_of(c), bits, deadline);
     if (!change || approx_exponent(*change) > 1) return std::nullopt;
@@ -207,11 +179,11 @@ std::optional<ApproxParameter> approx_root(const RootEquation& equation, const A
   return std::nullopt;
 }
 
-std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParameter& root, slong places, slong bits) {
+std::optional<Claim> prove_root(const RootEquation& equation, const ComplexDyadic& root, slong places, slong bits) {
   Integer one;
   fmpz_one(one);
   constexpr slong kBitsOfRadius = 6;  // the rounded centre is so much nearer to the root than the rim
-  const auto rounded = [places](const Arf& x) { return nearest_on_grid(Dyadic(x.raw()), -places - kBitsOfRadius); };
+  const auto rounded = [places](const Dyadic& x) { return nearest_on_grid(x, -places - kBitsOfRadius); };
   const Disc disc{{rounded(root.re), rounded(root.im)}, Dyadic::scaled(one, -places)};
   Claim claim{equation.type(), disc, std::nullopt, IsolatedRoot{static_cast<std::uint32_t>(bits)}};
   const Outcome outcome = establish_by(claim.statement, claim.region, claim.by);
@@ -225,7 +197,7 @@ std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParame
 std::vector<Claim> find_roots(const Region& region, const RootHunt& hunt, Deadline& deadline) {
   const slong size = size_exponent(region);
   const slong places = hunt.places.value_or(32 - size), bits = 2 * std::max(places, 32 - size) + 64;
-  const ApproxParameter centre = centre_of(region);
+  const ComplexDyadic centre = centre_of(bounding_box(region));
   const Shape shape = shape_of(region);
   std::vector<Claim> found;
   for (const Candidate& candidate : candidates(orbit_around(centre, size, bits, hunt.iterations), hunt)) {
@@ -233,8 +205,7 @@ std::vector<Claim> find_roots(const Region& region, const RootHunt& hunt, Deadli
     const auto start = good_start(candidate.equation, centre, size);
     const auto root = start ? approx_root(candidate.equation, *start, bits, deadline) : std::nullopt;
     if (!root) continue;
-    const ComplexRational at = to_rational({Dyadic(root->re.raw()), Dyadic(root->im.raw())});
-    if (!is_within(shape_of(at), shape)) continue;
+    if (!is_within(shape_of(to_rational(*root)), shape)) continue;
     auto claim = prove_root(candidate.equation, *root, places, bits);
     if (claim && is_within(shape_of(claim->region), shape)) found.push_back(std::move(*claim));
   }

@@ -19,18 +19,13 @@ struct RootEquation {
   Statement type() const;
 };
 
-/// A parameter of arbitrary precision, no enclosure.
-struct ApproxParameter {
-  Arf re, im;
-};
-
 /// Newton's method for the equation from the start, at `bits` bits. Nothing when it does not settle.
-std::optional<ApproxParameter> approx_root(const RootEquation& equation, const ApproxParameter& start, slong bits,
+std::optional<ComplexDyadic> approx_root(const RootEquation& equation, const ComplexDyadic& start, slong bits,
                                            Deadline& deadline);
 
 /// The claim that a disc of about the radius 2^-places about the approximation, exactly one root of its exact type in it
 /// (Lemma P2) within a quarter of the radius of the centre, established by the kernel. The approximation is good to about 2 `places` bits.
-std::optional<Claim> prove_root(const RootEquation& equation, const ApproxParameter& root, slong places, slong bits);
+std::optional<Claim> prove_root(const RootEquation& equation, const ComplexDyadic& root, slong places, slong bits);
 
 /// How far roots are looked for along the orbit of a region's centre.
 struct RootHunt {

@@ -4,15 +4,13 @@ import json
 import os
 import signal
 import subprocess
-import tempfile
 import time
 import unittest
-from pathlib import Path
+
+from region_support import ESTABLISHED, IO_FAILED, MALFORMED, REFUTED, UNDECIDED, Case
 
 MERESTONE = os.environ["MERESTONE"]
 CHECK = os.environ["MERESTONE_CHECK"]
-
-ESTABLISHED, REFUTED, MALFORMED, UNDECIDED, IO_FAILED = 0, 1, 2, 3, 4
 
 
 def decide(*words, text=None, binary=None, timeout=120, **options):
@@ -25,20 +23,6 @@ def decide(*words, text=None, binary=None, timeout=120, **options):
 def verdicts(*words, **options):
     done = decide("--json", *words, **options)
     return [json.loads(line) for line in done.stdout.splitlines()], done.returncode
-
-
-class Case(unittest.TestCase):
-    def setUp(self):
-        folder = tempfile.TemporaryDirectory(prefix="merestone-decide-")
-        self.addCleanup(folder.cleanup)
-        self.folder = Path(folder.name)
-
-    def assertOneLineError(self, done, code, *fragments):
-        self.assertEqual(done.returncode, code, done.stderr)
-        self.assertEqual(done.stderr.count("\n"), 1, done.stderr)
-        self.assertTrue(done.stderr.startswith("merestone: "), done.stderr)
-        for fragment in fragments:
-            self.assertIn(fragment, done.stderr)
 
 
 class Verdicts(Case):

@@ -5,6 +5,7 @@
 #include "catch.hpp"
 #include "kernel/claims.hpp"
 #include "kernel/safe_disc.hpp"
+#include "reference/boundary.hpp"
 #include "reference/mpfr_jet.hpp"
 #include "reference/point_source.hpp"
 
@@ -59,24 +60,8 @@ void require_escape(const Complex& c, std::uint64_t limit) {
   REQUIRE(reference::escape_index(c, 2, limit));
 }
 
-bool leaves(const Complex& c) {
-  reference::MpfrOrbit orbit(c, 128);
-  for (int n = 0; n < 200; ++n) {
-    orbit.step();
-    if (mpfr_cmp_ui(static_cast<mpfr_srcptr>(orbit.norm()), 4) > 0) return true;
-  }
-  return false;
-}
-
-// A point near the boundary of M, where a few rounds of bisection between a member and a point outside leave it.
 Complex beside_boundary(PointSource& source, long exponent) {
-  static const std::vector<Complex> members = {{0, 0}, {-1, 0}, {ratio(-1, 8), ratio(3, 4)}, {ratio(-7, 4), 0}};
-  Complex in = source.pick(members), out = mpq_class(3) * source.direction();
-  while (norm(out - in) > power_of_two(2 * exponent)) {
-    const Complex middle = reference::truncated(ratio(1, 2) * (in + out), 60);
-    (leaves(middle) ? out : in) = middle;
-  }
-  return out;
+  return reference::beside_boundary(source, exponent, 3);
 }
 
 }  // namespace

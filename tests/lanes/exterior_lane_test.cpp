@@ -7,6 +7,7 @@
 #include "catch.hpp"
 #include "kernel/safe_disc.hpp"
 #include "lanes/doubles.hpp"
+#include "reference/boundary.hpp"
 #include "reference/convert.hpp"
 #include "reference/mpfr_jet.hpp"
 #include "reference/mpfr_orbit.hpp"
@@ -28,24 +29,8 @@ bool reaches(const DoubleCircle& disc, const Complex& z) {
   return norm(z - centre(disc)) <= exact(disc.radius) * exact(disc.radius);
 }
 
-bool leaves(const Complex& c) {
-  reference::MpfrOrbit orbit(c, 128);
-  for (int n = 0; n < 200; ++n) {
-    orbit.step();
-    if (mpfr_cmp_ui(static_cast<mpfr_srcptr>(orbit.norm()), 4) > 0) return true;
-  }
-  return false;
-}
-
-// A point outside M within about 2^exponent of its boundary.
 Complex beside_boundary(PointSource& source, long exponent) {
-  static const std::vector<Complex> members = {{0, 0}, {-1, 0}, {ratio(-1, 8), ratio(3, 4)}, {ratio(-7, 4), 0}};
-  Complex in = source.pick(members), out = mpq_class(2) * source.direction();
-  while (norm(out - in) > power_of_two(2 * exponent)) {
-    const Complex middle = reference::truncated(ratio(1, 2) * (in + out), 60);
-    (leaves(middle) ? out : in) = middle;
-  }
-  return out;
+  return reference::beside_boundary(source, exponent, 2);
 }
 
 Complex any_centre(PointSource& source) {

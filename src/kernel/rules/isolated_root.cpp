@@ -1,5 +1,3 @@
-#include <algorithm>
-
 #include "kernel/orbit_enclosure.hpp"
 #include "kernel/primes.hpp"
 #include "kernel/rules/rules.hpp"
@@ -69,9 +67,7 @@ Outcome nucleus(const Region& region, const Nucleus& type, const IsolatedRoot& b
   const Disc* disc = as_disc(region);
   if (disc == nullptr) return no_disc();
   Values values(*disc, by.bits);
-  std::vector<std::uint64_t> shorter = proper_prime_cofactors(type.period);
-  std::sort(shorter.begin(), shorter.end());
-  for (const std::uint64_t k : shorter) {
+  for (const std::uint64_t k : ascending_prime_cofactors(type.period)) {
     if (auto lost = values.advance(k)) return *lost;
     if (!excludes_zero(values.here().range)) return may_vanish(z(k), "the period may be shorter");
   }
@@ -90,9 +86,7 @@ Outcome misiurewicz(const Region& region, const Misiurewicz& type, const Isolate
   if (!excludes_zero(before.range)) return may_vanish(z(k - 1), "it may be a nucleus");
   if (auto lost = values.advance(k)) return *lost;
   const DiscEnclosure first = values.here().range;
-  std::vector<std::uint64_t> shorter = proper_prime_cofactors(p);
-  std::sort(shorter.begin(), shorter.end());
-  for (const std::uint64_t q : shorter) {
+  for (const std::uint64_t q : ascending_prime_cofactors(p)) {
     if (auto lost = values.advance(k + q)) return *lost;
     if (!excludes_zero(difference(values.here().range, first, by.bits)))
       return may_vanish(z(k + q) + " - " + z(k), "the period may be shorter");

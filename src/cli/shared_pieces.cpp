@@ -1,4 +1,4 @@
-#include "cli/check_pieces.hpp"
+#include "cli/shared_pieces.hpp"
 
 #include <algorithm>
 

@@ -102,8 +102,10 @@ void add_sampling(CLI::App& program, CheckWords& words) {
   sample->type_name("N")->check(CLI::Range(std::uint64_t{1}, std::uint64_t{1} << 53).description(""));
   program.add_option("--seed", words.seed, "Repeat the draw that was printed with this seed; a fresh one by default")
       ->type_name("S")
-      ->check(CLI::Range(std::uint64_t{0}, kLargestSeed).description(""))
-      ->needs(sample);
+      ->check(CLI::Range(std::uint64_t{0}, kLargestSeed).description(""));
+  program.add_flag("--exact", words.exact,
+                   "Establish every mark of an area's certificate in ball arithmetic: some hundred times slower than the default, "
+                   "double precision with tracked errors and balls for a sample");
 }
 
 }  // namespace

@@ -18,6 +18,7 @@ inline constexpr std::uint64_t kLargestSeed = (std::uint64_t{1} << 53) - 1;
 struct CheckWords {
   std::vector<std::string> files;
   bool json = false, all = false, quiet = false;
+  bool exact = false;                      // areas in balls throughout
   std::optional<StatementForm> statement;  // sentences to quote instead of a report
   Limits limits;                           // of one claim
   unsigned threads = 0;

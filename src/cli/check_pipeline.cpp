@@ -73,7 +73,7 @@ JobPointer Pipeline::read(tbb::flow_control& control) {
 JobPointer Pipeline::open(JobPointer job) const {
   Batch& batch = job->batch;
   if (batch.stored) {
-    Read<std::vector<Claim>> claims = open_block(*batch.stored);
+    Read<std::vector<Claim>> claims = open_claims(*batch.stored);
     batch.stored.reset();
     if (const ReadFault* fault = fault_of(claims))
       batch.fault = *fault;

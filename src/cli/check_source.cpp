@@ -14,16 +14,16 @@ ClaimSource::Next DocumentSource::next() {
 }
 
 ClaimSource::Next ContainerSource::next() {
-  ContainerReader::Next read = reader_.next();
-  if (const auto* end = std::get_if<ContainerEnd>(&read)) return CertificateEnd{end->claims, end->digest};
+  ListReader::Next read = reader_.next();
+  if (const auto* end = std::get_if<ListEnd>(&read)) return CertificateEnd{end->claims, end->digest};
   if (const auto* fault = std::get_if<ReadFault>(&read)) return *fault;
   auto& block = std::get<StoredBlock>(read);
   Batch batch;
   batch.first = position_;
-  position_ += block.claims;
-  batch.chosen = selection_.next(static_cast<std::uint32_t>(block.claims));
+  position_ += block.entries;
+  batch.chosen = selection_.next(static_cast<std::uint32_t>(block.entries));
   // no further block may follow one that has fewer claims than a full one
-  batch.of_few = block.ordinal == 0 && block.claims <= kFewClaims;
+  batch.of_few = block.ordinal == 0 && block.entries <= kFewClaims;
   if (open_all_ || !batch.chosen.empty()) batch.stored = std::move(block);
   return batch;
 }

@@ -9,7 +9,7 @@
 #include "cli/check_selection.hpp"
 #include "cli/check_tally.hpp"
 #include "format/certificate.hpp"
-#include "format/container_reader.hpp"
+#include "format/list_container.hpp"
 
 namespace merestone {
 
@@ -61,16 +61,16 @@ class DocumentSource : public ClaimSource {
   std::size_t position_ = 0;
 };
 
-/// The blocks of a container, each a batch. A block of which no claim is chosen is opened only when `open_all`.
+/// The blocks of a container that is a list, each a batch. A block of which no claim is chosen is opened only when `open_all`.
 class ContainerSource : public ClaimSource {
  public:
-  ContainerSource(ContainerReader reader, Selection selection, bool open_all)
+  ContainerSource(ListReader reader, Selection selection, bool open_all)
       : reader_(std::move(reader)), selection_(std::move(selection)), open_all_(open_all) {}
   Next next() override;
   std::size_t batches_for_a_thread() const override { return 2; }
 
  private:
-  ContainerReader reader_;
+  ListReader reader_;
   Selection selection_;
   bool open_all_;
   std::uint64_t position_ = 0;

@@ -3,7 +3,6 @@
 #include <fmt/format.h>
 
 #include "format/certificate.hpp"
-#include "format/container_layout.hpp"
 
 namespace merestone {
 
@@ -52,7 +51,7 @@ std::optional<Failure> CertificateFile::add(nlohmann::json claim) {
 }
 
 std::optional<Failure> CertificateFile::write_block() {
-  const Result<PackedBlock> block = pack_block(claims_);
+  const Result<PackedBlock> block = pack_claims(claims_);
   if (!block) return Failure{file_.path() + ": " + block.failure().message};
   claims_.clear();
   return file_.write(container_.block(*block));

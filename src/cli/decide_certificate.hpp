@@ -4,7 +4,7 @@
 #include <string>
 
 #include "format/atomic_file.hpp"
-#include "format/container_writer.hpp"
+#include "format/list_container.hpp"
 
 namespace merestone {
 
@@ -43,7 +43,7 @@ class CertificateFile {
   bool is_container_;
   nlohmann::json provenance_;
   nlohmann::json claims_ = nlohmann::json::array();  // of the document, or of the block in hand
-  ContainerWriter container_;
+  ListWriter container_;
 };
 
 }  // namespace merestone

@@ -2,6 +2,9 @@
 #include <cstdio>
 #include <new>
 
+#include "cli/components_options.hpp"
+#include "cli/components_run.hpp"
+#include "cli/area_command.hpp"
 #include "cli/decide_options.hpp"
 #include "cli/decide_run.hpp"
 #include "cli/locate_options.hpp"
@@ -25,6 +28,7 @@ constexpr const char* kFooter = R"(Start with:
   merestone decide -0.75+0.1i           a verdict, with its proof in a line
   merestone decide --box A B            a verdict about every parameter of a box
   merestone locate --disc C R           what the disc contains, with proved decimals
+  merestone components --max-period 6   hyperbolic components with their areas
   merestone decide --help               parameters, regions, lists, limits, certificates
   merestone-check FILE                  what a colleague runs on a certificate
 
@@ -47,6 +51,10 @@ int run(int count, char** words) {
   const CLI::App* decide = add_decide_command(program, decide_words);
   LocateWords locate_words;
   const CLI::App* locate = add_locate_command(program, locate_words);
+  ComponentsWords components_words;
+  const CLI::App* components = add_components_command(program, components_words);
+  AreaWords area_words;
+  const CLI::App* area = add_area_command(program, area_words);
   ManualFormat format{};
   CLI::App* manual_command =
       program.add_subcommand("manual", "Print the manual page or the completion for a shell");
@@ -56,6 +64,8 @@ int run(int count, char** words) {
   if (const auto code = parse_words(program, arguments(count, words))) return static_cast<int>(*code);
   if (decide->parsed()) return run_decide(decide_words, joined(count, words));
   if (locate->parsed()) return run_locate(locate_words, joined(count, words));
+  if (components->parsed()) return run_components(components_words);
+  if (area->parsed()) return run_area_command(area_words, joined(count, words));
   Output output;
   output.write(manual(program, format));
   return static_cast<int>(output.failed() ? ExitCode::io_failed : ExitCode::established);

@@ -1,9 +1,7 @@
 #include "format/container_reader.hpp"
 
-#include <algorithm>
-
+#include "format/block_payload.hpp"
 #include "format/container_layout.hpp"
-#include "format/shown.hpp"
 #include "format/strict_json.hpp"
 #include "format/strict_object.hpp"
 #include "format/version.hpp"
@@ -12,29 +10,13 @@ namespace merestone {
 
 namespace {
 
-constexpr std::size_t kBlockHeadLength = 4 * 8 + 4 + kDigestLength;  // after the mark
+// after the mark
+constexpr std::size_t kBlockHeadLength = 4 * 8 + 4 + kDigestLength;
+constexpr std::size_t kAbsentHeadLength = 3 * 8 + kDigestLength;  // and the summary before the digest
 constexpr std::size_t kIndexEntryLength = 2 * 8 + kDigestLength;
 
-ReadFault damaged(const std::string& part, const std::string& reason) { return malformed({part + ": " + reason}); }
-
-std::string block_name(std::uint64_t ordinal) { return "block " + std::to_string(ordinal); }
-
-Sha256 take_digest(std::string_view& bytes) {
-  Sha256 digest{};
-  std::copy_n(bytes.begin(), kDigestLength, digest.begin());
-  bytes.remove_prefix(kDigestLength);
-  return digest;
-}
-
-StoredBlock read_head(std::string_view bytes, std::uint64_t& stored_length) {
-  StoredBlock block;
-  block.ordinal = take_integer(bytes, 8);
-  block.claims = take_integer(bytes, 8);
-  block.payload_length = take_integer(bytes, 8);
-  stored_length = take_integer(bytes, 8);
-  block.crc = static_cast<std::uint32_t>(take_integer(bytes, 4));
-  block.digest = take_digest(bytes);
-  return block;
+std::string wrong_ordinal(std::uint64_t ordinal) {
+  return "it has the ordinal " + std::to_string(ordinal) + "; a block before it is missing, or blocks were exchanged";
 }
 
 }  // namespace
@@ -65,67 +47,88 @@ std::optional<ReadFault> ContainerReader::read_header() {
   Result<nlohmann::json> header = read_strict_json(bytes);
   if (!header) return damaged("header", header.failure().message);
   const Place at;
-  if (auto fault = check_format(*header, at, kContainerFormat)) return ReadFault{fault->kind, "header: " + fault->message};
-  if (auto problem = check_keys(*header, at, {"content", "format", "version"}, {"provenance"}))
-    return damaged("header", problem->message);
-  const Result<std::string> content = read_text(*header, at, "content");
-  if (!content) return damaged("header", content.failure().message);
-  if (*content != "list") return damaged("header", Place(at, "content").fault("the content " + shown(*content) + " is not 'list'").message);
-  const auto provenance = take_provenance(header.value(), at);
-  if (!provenance) return damaged("header", provenance.failure().message);
+  if (auto fault = check_format(*header, at, kContainerFormat))
+    return ReadFault{fault->kind, "header: " + fault->message};
+  if (const auto content = read_text(*header, at, "content"); !content)
+    return damaged("header", content.failure().message);
+  header_ = std::move(header.value());
   return std::nullopt;
 }
 
 ContainerReader::Next ContainerReader::next() {
   const std::uint64_t offset = source_.offset();
+  const std::string name = block_name(entries_.size());
   std::string mark;
-  if (auto fault = take(mark, kMarkLength, block_name(entries_.size()))) return *fault;
+  if (auto fault = take(mark, kMarkLength, name)) return *fault;
   if (mark == kBlockMark) return read_block(offset);
+  if (mark == kAbsentMark) return read_absent(offset);
   if (mark == kIndexMark) return read_index(offset);
-  return damaged(block_name(entries_.size()), "neither a block nor the index begins at byte " + std::to_string(offset));
+  return damaged(name, "neither a block nor the index begins at byte " + std::to_string(offset));
+}
+
+void ContainerReader::note(std::uint64_t offset, std::uint64_t entries, const Sha256& digest) {
+  entries_.push_back({offset, entries});
+  digests_.push_back(digest);
+  sum_of_entries_ += entries;
 }
 
 ContainerReader::Next ContainerReader::read_block(std::uint64_t offset) {
-  const std::uint64_t ordinal = entries_.size();
-  const std::string name = block_name(ordinal);
-  if (ordinal > 0 && entries_.back().claims != kClaimsOfBlock)
-    return damaged(block_name(ordinal - 1), "it has " + std::to_string(entries_.back().claims) +
-                                                " claims and is not the last; every block but the last has 4,096");
+  const std::string name = block_name(entries_.size());
   std::string head;
   if (auto fault = take(head, kBlockHeadLength, name)) return *fault;
-  std::uint64_t stored_length = 0;
-  StoredBlock block = read_head(head, stored_length);
-  if (block.ordinal != ordinal) return damaged(name, "it has the ordinal " + std::to_string(block.ordinal));
-  if (block.claims < 1 || block.claims > kClaimsOfBlock)
-    return damaged(name, "it declares " + std::to_string(block.claims) + " claims; a block has 1 to 4,096");
-  if (block.payload_length > kLargestPayload) return damaged(name, "it declares a payload above 64 MiB");
-  if (stored_length > kLargestStored) return damaged(name, "it declares stored data above 64 MiB");
+  std::string_view rest = head;
+  StoredBlock block;
+  block.ordinal = take_integer(rest, 8);
+  block.entries = take_integer(rest, 8);
+  block.payload_length = take_integer(rest, 8);
+  const std::uint64_t stored_length = take_integer(rest, 8);
+  block.crc = static_cast<std::uint32_t>(take_integer(rest, 4));
+  block.digest = take_digest(rest);
+  if (block.ordinal != entries_.size()) return damaged(name, wrong_ordinal(block.ordinal));
+  if (auto problem = check_lengths(block.payload_length, stored_length)) return damaged(name, problem->message);
   if (auto fault = take(block.stored, stored_length, name)) return *fault;
-  entries_.push_back({offset, block.claims});
-  digests_.push_back(block.digest);
-  claims_ += block.claims;
+  note(offset, block.entries, block.digest);
+  return block;
+}
+
+ContainerReader::Next ContainerReader::read_absent(std::uint64_t offset) {
+  const std::string name = block_name(entries_.size());
+  if (!summary_length_) return damaged(name, "it is absent; a container of this content holds all of its blocks");
+  std::string head;
+  if (auto fault = take(head, kAbsentHeadLength + *summary_length_, name)) return *fault;
+  std::string_view rest = head;
+  AbsentBlock block;
+  block.ordinal = take_integer(rest, 8);
+  block.entries = take_integer(rest, 8);
+  block.payload_length = take_integer(rest, 8);
+  block.summary = rest.substr(0, *summary_length_);
+  rest.remove_prefix(*summary_length_);
+  block.digest = take_digest(rest);
+  if (block.ordinal != entries_.size()) return damaged(name, wrong_ordinal(block.ordinal));
+  if (block.payload_length > kLargestPayload) return damaged(name, "it declares a payload above 64 MiB");
+  note(offset, block.entries, block.digest);
   return block;
 }
 
 ContainerReader::Next ContainerReader::read_index(std::uint64_t offset) {
-  if (entries_.empty()) return damaged("index", "there is no block before it; a list has at least one");
   std::string bytes;
   if (auto fault = take(bytes, 8, "index")) return *fault;
   std::string_view count_bytes = bytes;
   if (const std::uint64_t count = take_integer(count_bytes, 8); count != entries_.size())
-    return damaged("index", "it counts " + std::to_string(count) + " blocks; " + std::to_string(entries_.size()) + " were read");
+    return damaged("index",
+                   "it counts " + std::to_string(count) + " blocks; " + std::to_string(entries_.size()) + " were read");
   for (std::size_t i = 0; i < entries_.size(); ++i)
     if (auto fault = check_entry(i)) return *fault;
   if (auto fault = check_end(offset)) return *fault;
-  return ContainerEnd{claims_, claims_digest(digests_)};
+  return ContainerEnd{sum_of_entries_};
 }
 
 std::optional<ReadFault> ContainerReader::check_entry(std::size_t i) {
   std::string bytes;
   if (auto fault = take(bytes, kIndexEntryLength, "index")) return fault;
   std::string_view rest = bytes;
-  const std::uint64_t offset = take_integer(rest, 8), claims = take_integer(rest, 8);
-  if (offset != entries_[i].offset || claims != entries_[i].claims || take_digest(rest) != digests_[i])
+  const std::uint64_t offset = take_integer(rest, 8), entries = take_integer(rest, 8);
+  if (offset != entries_[i].offset || entries != entries_[i].entries || take_digest(rest) != digests_[i])
     return damaged("index", "its entry for block " + std::to_string(i) + " disagrees with the block");
   return std::nullopt;
 }

@@ -37,11 +37,14 @@ std::string canonical_json(const nlohmann::json& value) {
 
 Sha256 claims_digest(const nlohmann::json& claims) { return sha256(canonical_json(claims)); }
 
-Sha256 claims_digest(const std::vector<Sha256>& blocks) {
-  nlohmann::json list = {{"content", "list"}, {"format", "merestone-container"}, {"version", 1}};
-  list["blocks"] = nlohmann::json::array();
-  for (const Sha256& block : blocks) list["blocks"].push_back(hexadecimal(block));
-  return sha256(canonical_json(list));
+Sha256 container_digest(nlohmann::json header, const std::vector<Sha256>& blocks) {
+  header["format"] = "merestone-container";
+  header["version"] = 1;
+  nlohmann::json& list = header["blocks"] = nlohmann::json::array();
+  for (const Sha256& block : blocks) list.push_back(hexadecimal(block));
+  return sha256(canonical_json(header));
 }
+
+Sha256 claims_digest(const std::vector<Sha256>& blocks) { return container_digest({{"content", "list"}}, blocks); }
 
 }  // namespace merestone

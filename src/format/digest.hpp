@@ -24,7 +24,10 @@ std::string canonical_json(const nlohmann::json& value);
 
 /// The claims-digest of the small form, from its array of claims.
 Sha256 claims_digest(const nlohmann::json& claims);
-/// The claims-digest of a container, from the digests of its blocks' payloads in order.
+/// The claims-digest of a container, from what its header says of the claims ("content" and what belongs to it) and the
+/// digests of its blocks' payloads in order.
+Sha256 container_digest(nlohmann::json header, const std::vector<Sha256>& blocks);
+/// The same of a container that is a list.
 Sha256 claims_digest(const std::vector<Sha256>& blocks);
 
 }  // namespace merestone

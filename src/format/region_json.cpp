@@ -83,6 +83,14 @@ json to_json(const Region& region) { return std::visit(ToJson{}, region); }
 
 Result<Dyadic> read_dyadic_value(const json& value, const Place& at) { return read_number<Dyadic>(value, at, read_dyadic); }
 
+Result<std::array<Dyadic, 2>> read_dyadic_pair(const json& value, const Place& at) {
+  return read_pair<Dyadic>(value, at, read_dyadic);
+}
+
+Result<std::array<Rational, 2>> read_rational_pair(const json& value, const Place& at) {
+  return read_pair<Rational>(value, at, read_rational);
+}
+
 Result<ComplexDyadic> read_centre(const json& value, const Place& at) {
   auto pair = read_pair<Dyadic>(value["centre"], Place(at, "centre"), read_dyadic);
   if (!pair) return pair.failure();

@@ -5,6 +5,7 @@
 
 #if __has_include(<flint/arb.h>)
 #include <flint/acb.h>
+#include <flint/acb_poly.h>
 #include <flint/arb.h>
 #include <flint/arf.h>
 #include <flint/fmpq.h>
@@ -12,6 +13,7 @@
 #include <flint/mag.h>
 #else
 #include <acb.h>
+#include <acb_poly.h>
 #include <arb.h>
 #include <arf.h>
 #include <flint/fmpq.h>

@@ -1,25 +1,22 @@
 #include "catch.hpp"
 
 #include "format/claim_json.hpp"
-#include "format/container_reader.hpp"
-#include "format/container_writer.hpp"
+#include "format/list_container.hpp"
 
 using namespace merestone;
 
 namespace {
 
-Claim member(long k) {
-  return {Member{}, Point{{Rational(-k, 100'000), Rational(0)}}, std::nullopt, RealSegment{}};
-}
+Claim member(long k) { return {Member{}, Point{{Rational(-k, 100'000), Rational(0)}}, std::nullopt, RealSegment{}}; }
 
 std::string container(std::size_t claims) {
-  ContainerWriter writer;
+  ListWriter writer;
   std::string bytes = writer.header({{"program", "a test"}});
   nlohmann::json block = nlohmann::json::array();
   for (std::size_t k = 0; k < claims; ++k) {
     block.push_back(to_json(member(static_cast<long>(k))));
     if (block.size() < 4096 && k + 1 < claims) continue;
-    bytes += writer.block(*pack_block(block));
+    bytes += writer.block(*pack_claims(block));
     block.clear();
   }
   return bytes + writer.end();
@@ -33,17 +30,17 @@ struct Contents {
 
 Contents read(const std::string& bytes) {
   Contents contents;
-  auto opened = ContainerReader::open(std::move(std::get<ByteSource>(ByteSource::memory(bytes))));
+  auto opened = ListReader::open(ContainerReader::open(std::move(std::get<ByteSource>(ByteSource::memory(bytes)))));
   if (const ReadFault* fault = fault_of(opened)) return {{}, {}, fault->message};
-  auto& reader = std::get<ContainerReader>(opened);
+  auto& reader = std::get<ListReader>(opened);
   for (;;) {
     auto next = reader.next();
     if (const auto* fault = std::get_if<ReadFault>(&next)) return {{}, {}, fault->message};
-    if (const auto* end = std::get_if<ContainerEnd>(&next)) {
+    if (const auto* end = std::get_if<ListEnd>(&next)) {
       contents.digest = end->digest;
       return contents;
     }
-    auto claims = open_block(std::get<StoredBlock>(next));
+    auto claims = open_claims(std::get<StoredBlock>(next));
     if (const ReadFault* fault = fault_of(claims)) return {{}, {}, fault->message};
     for (Claim& claim : std::get<std::vector<Claim>>(claims)) contents.claims.push_back(std::move(claim));
   }
@@ -87,9 +84,11 @@ TEST_CASE("a container that is cut short or continued is refused") {
 }
 
 TEST_CASE("a payload that inflates to more than it declares is refused") {
-  ContainerWriter writer;
-  PackedBlock block = *pack_block(nlohmann::json::array({to_json(member(1))}));
+  ListWriter writer;
+  PackedBlock block = *pack_claims(nlohmann::json::array({to_json(member(1))}));
   block.payload_length -= 1;
-  const std::string bytes = writer.header(nlohmann::json::object()) + writer.block(block) + writer.end();
+  std::string bytes = writer.header(nlohmann::json::object());
+  bytes += writer.block(block);
+  bytes += writer.end();
   CHECK(read(bytes).fault.find("block 0") != std::string::npos);
 }

@@ -1,3 +1,4 @@
+#include "kernel/isolated_nucleus.hpp"
 #include "kernel/orbit_enclosure.hpp"
 #include "kernel/primes.hpp"
 #include "kernel/rules/rules.hpp"
@@ -38,8 +39,8 @@ class Values {
 bool excludes_zero(const DiscEnclosure& z) { return certainly_beyond(z, Dyadic()); }
 
 // Krawczyk's test in the form of Rouché's theorem: |g(a)| < (|m| - rad g') r with m the midpoint of g' over the disc.
-Outcome one_root(const Disc& region, const DiscEnclosure& at_centre, const DiscEnclosure& slope,
-                 const std::string& equation) {
+std::variant<IsolatedBy, NotEstablished> one_root(const Disc& region, const DiscEnclosure& at_centre,
+                                                  const DiscEnclosure& slope, const std::string& equation) {
   const Dyadic value = modulus_upper_bound(at_centre), steepness = modulus_lower_bound(slope);
   Arf reach;
   arf_mul(reach, steepness.raw(), region.radius.raw(), 64, ARF_RND_FLOOR);
@@ -48,7 +49,13 @@ Outcome one_root(const Disc& region, const DiscEnclosure& at_centre, const DiscE
                           "| at the centre is not below radius times the least derivative"};
   Arf distance;
   arf_div(distance, value.raw(), steepness.raw(), 64, ARF_RND_CEIL);
-  return Established{{{"distance of the root from the centre", Dyadic(), Dyadic(distance.raw())}}, {"P2", "E2"}};
+  return IsolatedBy{at_centre, slope, steepness, Dyadic(distance.raw())};
+}
+
+Outcome as_outcome(const std::variant<IsolatedBy, NotEstablished>& root) {
+  if (const auto* problem = std::get_if<NotEstablished>(&root)) return *problem;
+  const Dyadic& distance = std::get<IsolatedBy>(root).distance;
+  return Established{{{"distance of the root from the centre", Dyadic(), distance}}, {"P2", "E2"}};
 }
 
 std::string z(std::uint64_t n) { return "z_" + std::to_string(n); }
@@ -66,14 +73,7 @@ NotEstablished no_disc() { return {"the region is not a disc"}; }
 Outcome nucleus(const Region& region, const Nucleus& type, const IsolatedRoot& by) {
   const Disc* disc = as_disc(region);
   if (disc == nullptr) return no_disc();
-  Values values(*disc, by.bits);
-  for (const std::uint64_t k : ascending_prime_cofactors(type.period)) {
-    if (auto lost = values.advance(k)) return *lost;
-    if (!excludes_zero(values.here().range)) return may_vanish(z(k), "the period may be shorter");
-  }
-  if (auto lost = values.advance(type.period)) return *lost;
-  const Value last = values.here();
-  return one_root(*disc, last.at_centre, last.slope, z(type.period));
+  return as_outcome(isolate_nucleus(*disc, type.period, by.bits));
 }
 
 Outcome misiurewicz(const Region& region, const Misiurewicz& type, const IsolatedRoot& by) {
@@ -96,7 +96,23 @@ Outcome misiurewicz(const Region& region, const Misiurewicz& type, const Isolate
   DiscEnclosure at_centre, slope;
   add(at_centre, last.at_centre, before.at_centre, by.bits);
   add(slope, last.slope, before.slope, by.bits);
-  return one_root(*disc, at_centre, slope, z(k - 1 + p) + " + " + z(k - 1));
+  return as_outcome(one_root(*disc, at_centre, slope, z(k - 1 + p) + " + " + z(k - 1)));
 }
 
 }  // namespace merestone::rules
+
+namespace merestone {
+
+std::variant<IsolatedBy, NotEstablished> isolate_nucleus(const Disc& disc, std::uint64_t period, slong bits) {
+  using namespace rules;
+  Values values(disc, bits);
+  for (const std::uint64_t k : ascending_prime_cofactors(period)) {
+    if (auto lost = values.advance(k)) return *lost;
+    if (!excludes_zero(values.here().range)) return may_vanish(z(k), "the period may be shorter");
+  }
+  if (auto lost = values.advance(period)) return *lost;
+  const Value last = values.here();
+  return one_root(disc, last.at_centre, last.slope, z(period));
+}
+
+}  // namespace merestone

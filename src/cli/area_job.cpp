@@ -2,6 +2,7 @@
 
 #include <fmt/format.h>
 
+#include <filesystem>
 #include <mutex>
 
 #include "cli/interruption.hpp"
@@ -41,6 +42,11 @@ class Job {
   std::optional<Failure> open_store() {
     const Result<AreaCover> cover = cover_of(job_.request);
     if (!cover) return cover.failure();
+    std::error_code ignored;
+    const bool is_there = std::filesystem::exists(journal_path(), ignored);
+    if (is_there && !job_.resume)
+      return Failure{journal_path() + ": an earlier run left this journal; --resume goes on with it, or remove it to begin anew"};
+    if (!is_there && job_.resume) return Failure{journal_path() + ": there is no journal to go on with; begin without --resume"};
     const std::string work = description_of(job_.request, *cover);
     Result<Journal> journal = job_.resume ? Journal::resume(journal_path(), work) : Journal::create(journal_path(), work);
     if (!journal) return journal.failure();

@@ -1,5 +1,9 @@
 #include "cli/area_options.hpp"
 
+#include <fmt/format.h>
+
+#include <cmath>
+
 #include "cli/region_words.hpp"
 #include "cli/shared_arguments.hpp"
 #include "cover/trunk.hpp"
@@ -103,18 +107,23 @@ std::optional<Failure> check_container_name(const std::string& path) {
 
 Result<AreaRequest> read_area_words(const AreaWords& words) {
   AreaRequest request;
-  if (!words.within.first.empty()) {
-    const Result<RationalBox> box = read_box("area", words.within);
+  if (words.within) {
+    const Result<RationalBox> box = read_box("area", *words.within);
     if (!box) return box.failure();
     if (words.resolution) return Failure{"area: --resolution is for all of M; with --within cells inside bound the area from below"};
     request.within = *box;
   }
   if (!words.out.empty())
     if (auto problem = check_container_name(words.out)) return *problem;
+  if (words.seconds && std::isnan(*words.seconds)) return Failure{"--seconds nan: give a number of seconds"};
   if (!words.depth) request.seconds = words.seconds.value_or(kDefaultSeconds);
   request.depth = words.depth ? *words.depth : depth_for_seconds(*request.seconds);
   if (!request.within) request.resolution = words.resolution.value_or(resolution_for_depth(request.depth));
   if (words.rules == "elementary") request.rules = CoverRules::elementary;
+  if (const Result<AreaCover> cover = cover_of(request); !cover) {
+    const auto& [corner, opposite] = *words.within;  // all of M can be cut to any depth
+    return Failure{fmt::format("area: --within {} {}: {}", packed(corner), packed(opposite), cover.failure().message)};
+  }
   return request;
 }
 

@@ -19,7 +19,7 @@ namespace {
 
 namespace tbb = oneapi::tbb;
 
-constexpr std::size_t kMostFailuresKept = 20;
+constexpr std::size_t kMostFailuresKept = 20, kMostRunsKept = 1000;
 constexpr std::uint64_t kSampledBlocks = 64;         // the first blocks have one mark each established in balls too, ...
 constexpr std::uint64_t kOneBlockIn = 16;            // ... and of the others one in so many
 constexpr std::uint64_t kUnitsOfFile = 100;          // the file's limit on work, in those of a claim
@@ -196,6 +196,9 @@ PartPointer AreaCheck::establish(PartPointer part) const {
 
 void AreaCheck::take_absent(const AbsentCover& absent) {
   ++verdict_.absent;
+  auto& runs = verdict_.absent_runs;
+  if (!runs.empty() && runs.back().second + 1 == absent.ordinal) runs.back().second = absent.ordinal;
+  else if (runs.size() < kMostRunsKept) runs.emplace_back(absent.ordinal, absent.ordinal);
   CoverBlock block;
   block.column = absent.column, block.row = absent.row, block.grade = absent.grade;
   if (!sum_) return;

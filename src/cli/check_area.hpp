@@ -23,6 +23,7 @@ struct AreaVerdict {
   AreaHeader claimed;
   std::optional<Dyadic> at_least, at_most;  // as computed here, from what is established; at_most needs every block
   std::uint64_t blocks = 0, absent = 0, components = 0;
+  std::vector<std::pair<std::uint64_t, std::uint64_t>> absent_runs;  // the first and last of each stretch of absent blocks; the first ones
   std::uint64_t outside_marks = 0, inside_marks = 0, sampled = 0, fallbacks = 0;
   std::vector<std::string> failures;  // what is not established; the first ones
   std::uint64_t failed = 0;

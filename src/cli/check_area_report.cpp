@@ -5,7 +5,9 @@
 #include <nlohmann/json.hpp>
 
 #include "cli/check_message.hpp"
+#include "cli/check_notation.hpp"
 #include "cli/check_text.hpp"
+#include "cli/shared_version.hpp"
 #include "format/digest.hpp"
 #include "format/literal.hpp"
 #include "format/shown.hpp"
@@ -17,6 +19,7 @@ namespace {
 
 using Json = nlohmann::ordered_json;
 constexpr int kDigits = 10;
+constexpr std::size_t kLongestList = 200;  // characters, of absent blocks
 
 ExitCode exit_code_of(const AreaVerdict& verdict) {
   if (verdict.fault) return verdict.fault->kind == ReadFault::Kind::input ? ExitCode::io_failed : ExitCode::malformed;
@@ -25,10 +28,12 @@ ExitCode exit_code_of(const AreaVerdict& verdict) {
   return verdict.absent > 0 ? ExitCode::sample_only : ExitCode::established;
 }
 
-std::string place_in_words(const AreaHeader& header) {
-  if (!header.cover || !header.cover->within) return "M";
+std::string place_in_words(const AreaHeader& header, const Notation& n = Notation(StatementForm::text)) {
+  if (!header.cover || !header.cover->within) return n.formula("M");
   const RationalBox& box = *header.cover->within;
-  return fmt::format("M in the box [{}, {}] x [{}, {}]", spell(box.lo.re), spell(box.hi.re), spell(box.lo.im), spell(box.hi.im));
+  const std::string sides = fmt::format("[{}, {}] {} [{}, {}]", spell(box.lo.re), spell(box.hi.re), n.pick("x", "\\times"),
+                                        spell(box.lo.im), spell(box.hi.im));
+  return n.formula("M") + " in the box " + n.formula(sides);
 }
 
 std::string interval(const std::optional<Dyadic>& lower, const std::optional<Dyadic>& upper) {
@@ -42,6 +47,18 @@ std::string verdict_in_words(const AreaVerdict& verdict) {
   if (verdict.absent > 0)
     return fmt::format("established in part: {} of {} blocks are absent", grouped(verdict.absent), grouped(verdict.blocks));
   return "established";
+}
+
+// Which blocks are absent.
+std::string absent_in_words(const AreaVerdict& verdict) {
+  std::string text;
+  std::uint64_t named = 0;
+  for (const auto& [first, last] : verdict.absent_runs) {
+    if (named > 0 && text.size() > kLongestList) break;
+    text += fmt::format("{}{}", text.empty() ? "" : ", ", first == last ? grouped(first) : grouped(first) + " to " + grouped(last));
+    named += last - first + 1;
+  }
+  return text + (named < verdict.absent ? fmt::format(" and {} more", grouped(verdict.absent - named)) : "");
 }
 
 std::string counts_in_words(const AreaVerdict& verdict) {
@@ -59,6 +76,7 @@ std::string in_words(const std::string& path, const AreaVerdict& verdict, std::u
                                  interval(verdict.claimed.at_least, verdict.claimed.at_most));
   for (const std::string& failure : verdict.failures) text += "  " + failure + "\n";
   if (verdict.over_limit) text += "  " + *verdict.over_limit + "\n";
+  if (verdict.absent > 0) text += fmt::format("  absent, not established: block {}\n", absent_in_words(verdict));
   if (!verdict.fault && verdict.failed == 0 && !verdict.over_limit) {
     text += fmt::format("  computed here{}: {}\n", verdict.absent > 0 ? ", from what absent blocks claim too" : "",
                         interval(verdict.at_least, verdict.at_most));
@@ -76,7 +94,8 @@ Json as_json(const std::string& path, const AreaVerdict& verdict, std::uint64_t 
   put("at_least", verdict.claimed.at_least), put("at_most", verdict.claimed.at_most);
   put("computed_at_least", verdict.at_least), put("computed_at_most", verdict.at_most);
   json["verdict"] = verdict_in_words(verdict);
-  json["blocks"] = verdict.blocks, json["absent"] = verdict.absent, json["components"] = verdict.components;
+  json["blocks"] = verdict.blocks, json["absent"] = verdict.absent, json["absent_blocks"] = verdict.absent_runs;
+  json["components"] = verdict.components;
   json["outside_marks"] = verdict.outside_marks, json["inside_marks"] = verdict.inside_marks;
   json["sampled"] = verdict.sampled, json["fallbacks"] = verdict.fallbacks, json["seed"] = seed;
   json["failures"] = verdict.failures;
@@ -87,12 +106,22 @@ Json as_json(const std::string& path, const AreaVerdict& verdict, std::uint64_t 
   return json;
 }
 
-std::string sentence(const AreaVerdict& verdict) {
-  return fmt::format(
-      "The area of {} lies in {}. The lower end is the sum of lower bounds of the areas of hyperbolic components, the upper end "
-      "the area of a cover less discs and cells proved outside M; both are established by merestone-check from the certificate "
-      "with claims-digest {}.\n",
-      place_in_words(verdict.claimed), interval(verdict.claimed.at_least, verdict.claimed.at_most), hexadecimal(verdict.end->digest));
+// How each end is proved.
+std::string proof_in_words(const AreaVerdict& verdict, const Notation& n) {
+  const std::string lower = verdict.components > 0 ? "a sum of lower bounds of the areas of hyperbolic components"
+                                                   : "the area of cells proved inside " + n.formula("M");
+  if (!verdict.at_most) return fmt::format("The lower end is {}; it is", lower);
+  const std::string upper = "the area of a cover less discs and cells proved outside " + n.formula("M");
+  if (!verdict.at_least) return fmt::format("The upper end is {}; it is", upper);
+  return fmt::format("The lower end is {}, the upper end {}; both are", lower, upper);
+}
+
+std::string sentence(const AreaVerdict& verdict, StatementForm form) {
+  const Notation n(form);
+  const std::string ends = interval(verdict.claimed.at_least, verdict.claimed.at_most);
+  return fmt::format("The area of {} lies in {}. {} established by merestone-check {} from the certificate with claims-digest {}.\n",
+                     place_in_words(verdict.claimed, n), n.formula(ends), proof_in_words(verdict, n), kProgramVersion,
+                     n.digest(hexadecimal(verdict.end->digest)));
 }
 
 void complain_of(const std::string& path, const AreaVerdict& verdict) {
@@ -100,7 +129,8 @@ void complain_of(const std::string& path, const AreaVerdict& verdict) {
   if (verdict.over_limit) complain(file_in_words(path) + ": " + *verdict.over_limit);
   for (const std::string& failure : verdict.failures) complain(file_in_words(path) + ": " + failure);
   if (verdict.absent > 0 && verdict.failed == 0 && !verdict.fault)
-    complain(fmt::format("{}: {} blocks are absent and were not established", file_in_words(path), grouped(verdict.absent)));
+    complain(fmt::format("{}: absent and not established: {} of {} blocks, namely {}", file_in_words(path),
+                         grouped(verdict.absent), grouped(verdict.blocks), absent_in_words(verdict)));
 }
 
 }  // namespace
@@ -112,7 +142,7 @@ ExitCode report_area(const std::string& path, const AreaVerdict& verdict, const 
     console.output.write(as_json(path, verdict, seed).dump(-1, ' ', false, Json::error_handler_t::replace) + "\n");
   } else if (words.quiet || words.statement) {
     complain_of(path, verdict);
-    if (words.statement && code == ExitCode::established) console.output.write(sentence(verdict));
+    if (words.statement && code == ExitCode::established) console.output.write(sentence(verdict, *words.statement));
   } else {
     if (verdict.fault) complain(file_in_words(path) + ": " + verdict.fault->message);
     if (!console.named_program) console.output.write(program_in_words());

@@ -1,6 +1,7 @@
 #include "cli/check_memory.hpp"
 
 #include <gmp.h>
+#include <malloc.h>
 #include <unistd.h>
 
 #include <atomic>
@@ -40,6 +41,11 @@ void out_of_memory() {
 void end_when_memory_ends() {
   std::set_new_handler(out_of_memory);
   mp_set_memory_functions(allocate, reallocate_sized, release_sized);
+#ifdef __GLIBC__
+  // canvases of millions of cells come and go: their memory is kept instead of being given back and cleared each time
+  ::mallopt(M_MMAP_THRESHOLD, 1 << 26);
+  ::mallopt(M_TRIM_THRESHOLD, 1 << 28);
+#endif
   __flint_set_memory_functions(allocate, allocate_zeroed, reallocate, release);
 }
 

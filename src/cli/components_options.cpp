@@ -43,8 +43,7 @@ CLI::App* add_components_command(CLI::App& program, ComponentsWords& words) {
       ->type_name("N")
       ->check(CLI::Range(std::uint32_t{1}, kLongestCompletePeriod));
   command
-      ->add_option("--resolution", words.resolution,
-                   "Components of any period whose conformal radius is at least 2^-R")
+      ->add_option("--resolution", words.resolution, "Components of any period whose conformal radius is at least 2^-R")
       ->type_name("R")
       ->check(CLI::Range(1, kFinestResolution));
   command->add_option("--most", words.most, "List the largest only; the totals are of all")

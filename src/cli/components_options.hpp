@@ -8,11 +8,11 @@ namespace merestone {
 
 /// The words of `merestone components`, as typed.
 struct ComponentsWords {
-  std::uint32_t max_period = 0;    // 0: not given
-  int resolution = 0;              // 0: not given
-  std::uint64_t most = 0;          // 0: all
+  std::uint32_t max_period = 0;  // 0: not given
+  int resolution = 0;            // 0: not given
+  std::uint64_t most = 0;        // 0: all
   int digits = 15;
-  unsigned threads = 0;            // 0: as many as allowed
+  unsigned threads = 0;  // 0: as many as allowed
   bool csv = false, json = false;
 };
 

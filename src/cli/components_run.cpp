@@ -54,9 +54,8 @@ std::optional<Failure> fault_of(const std::vector<CatalogueEntry>& entries) {
 }
 
 void keep_largest(std::vector<CatalogueEntry>& entries, std::uint64_t most) {
-  std::stable_sort(entries.begin(), entries.end(), [](const CatalogueEntry& a, const CatalogueEntry& b) {
-    return a.proved.lower > b.proved.lower;
-  });
+  std::stable_sort(entries.begin(), entries.end(),
+                   [](const CatalogueEntry& a, const CatalogueEntry& b) { return a.proved.lower > b.proved.lower; });
   if (most > 0 && entries.size() > most) entries.resize(most);
 }
 
@@ -67,8 +66,9 @@ int finish(const ComponentsTotal& total, std::uint32_t asked, const Output& outp
     return 128 + signal;
   }
   if (total.complete_to < asked)
-    return refuse(ExitCode::undecided, {fmt::format("components: not all of period {} were found; what is listed is proved",
-                                                    total.complete_to + 1)});
+    return refuse(
+        ExitCode::undecided,
+        {fmt::format("components: not all of period {} were found; what is listed is proved", total.complete_to + 1)});
   return static_cast<int>(ExitCode::established);
 }
 
@@ -81,11 +81,13 @@ int run_components(const ComponentsWords& words) {
   const Interruption interruption;
   std::vector<CatalogueEntry> entries = watched_catalogue(options);
   if (const auto fault = fault_of(entries))
-    return refuse(ExitCode::undecided, {"components: the list is not proved to be of distinct components: " + fault->message});
+    return refuse(ExitCode::undecided,
+                  {"components: the list is not proved to be of distinct components: " + fault->message});
   const ComponentsTotal total = ComponentsTotal::of(entries, options.complete_to);
   keep_largest(entries, words.most);
-  const ComponentsForm form =
-      words.csv ? ComponentsForm::csv : words.json ? ComponentsForm::json : ComponentsForm::table;
+  const ComponentsForm form = words.csv    ? ComponentsForm::csv
+                              : words.json ? ComponentsForm::json
+                                           : ComponentsForm::table;
   Output output;
   output.write(components_heading(form, words.digits));
   for (const CatalogueEntry& entry : entries) {

@@ -16,9 +16,9 @@ std::string component_line(const CatalogueEntry& entry, ComponentsForm form, int
 
 /// What all of them are together.
 struct ComponentsTotal {
-  std::size_t listed = 0;    // on or above the real axis
-  std::uint64_t all = 0;     // in the plane
-  Dyadic area;               // lower bound, mirror images counted
+  std::size_t listed = 0;  // on or above the real axis
+  std::uint64_t all = 0;   // in the plane
+  Dyadic area;             // lower bound, mirror images counted
   std::uint32_t complete_to = 0;
 
   static ComponentsTotal of(const std::vector<CatalogueEntry>& entries, std::uint32_t complete_to);

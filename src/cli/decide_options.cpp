@@ -1,6 +1,7 @@
 #include "cli/decide_options.hpp"
 
 #include "cli/decide_certificate.hpp"
+#include "cover/trunk.hpp"
 #include "kernel/typed_number.hpp"
 
 namespace merestone {
@@ -16,6 +17,8 @@ constexpr const char* kFooter = R"(Examples:
       what the colleague runs: it establishes every claim anew
   merestone decide --box -0.76+0.09i -0.74+0.11i
       every parameter of a box; it straddles where it has both a member of M and a parameter outside
+  merestone decide --box -0.76+0.09i -0.74+0.11i --depth 10 --out cells.mere
+      cuts the box into cells and says what area of it is outside, inside and undecided, exactly
   merestone decide --disc 0.26 0.005 --rules elementary
       a disc, by its centre and radius; proved by arithmetic and attracting cycles only
   merestone decide --expect outside 0.2501 && echo "it is outside"
@@ -78,6 +81,10 @@ void add_rules(CLI::App& command, DecideWords& words) {
       ->type_name("N")
       ->check(CLI::Range(std::uint64_t{1}, std::uint64_t{1'000'000}))
       ->capture_default_str();
+  CLI::Option* depth = command.add_option("--depth", words.depth, "Halve the cells of the one box so often, and say what area has which verdict")
+      ->type_name("N")
+      ->check(CLI::Range(kSmallestDepth, kLargestDepth));
+  command.add_flag("--resume", words.resume, "Go on with the journal beside --out, of an interrupted run with --depth")->needs(depth);
   command
       .add_option("--rules", words.rules,
                   "elementary: regions are decided without the theory of univalent functions, by arithmetic and "

@@ -22,7 +22,9 @@ struct DecideWords {
   SearchLimits limits;
   std::string rules = "all";
   std::string expect;
+  std::optional<unsigned> depth;  // cut the one box into cells
   std::string out;
+  bool resume = false;
   bool json = false, quiet = false;
   unsigned threads = 0;
 };

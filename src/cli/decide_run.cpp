@@ -9,6 +9,7 @@
 #include <nlohmann/json.hpp>
 
 #include "cli/decide_answer.hpp"
+#include "cli/decide_cells.hpp"
 #include "cli/decide_certificate.hpp"
 #include "cli/decide_points.hpp"
 #include "cli/decide_tally.hpp"
@@ -177,6 +178,7 @@ int DecideRun::run() {
 }  // namespace
 
 int run_decide(const DecideWords& words, const std::string& command_line) {
+  if (words.depth) return run_decide_cells(words, command_line);
   Result<DecideRequest> request = read_decide_words(words);
   if (!request) return refuse(ExitCode::malformed, request.failure());
   Result<DecidePoints> points = DecidePoints::open(words);

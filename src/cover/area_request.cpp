@@ -5,6 +5,7 @@
 
 #include "cover/trunk.hpp"
 #include "format/digest.hpp"
+#include "search/catalogue/catalogue.hpp"
 
 namespace merestone {
 
@@ -20,7 +21,7 @@ unsigned depth_for_seconds(double seconds) {
   return static_cast<unsigned>(std::clamp(std::lround(depth), long{kSmallestDepth}, long{kLargestDepth}));
 }
 
-int resolution_for_depth(unsigned depth) { return std::clamp(static_cast<int>(depth) - 1, 4, 22); }
+int resolution_for_depth(unsigned depth) { return std::clamp(static_cast<int>(depth) - 2, 4, kFinestResolution); }
 
 Result<AreaCover> cover_of(const AreaRequest& request) {
   if (!request.within) return cover_of_all(request.rules, request.depth);

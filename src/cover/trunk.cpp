@@ -10,10 +10,10 @@ namespace {
 
 constexpr std::uint32_t kSteps = 1000;
 
-// Blocks of seven to nine depths: small enough for the processor's cache, and not too many.
+// Blocks of seven or eight depths: their canvases fit into a processor's cache, and they are not too many.
 unsigned trunk_grade(unsigned depth) {
   if (depth <= 16) return depth > 8 ? depth - 7 : 1;
-  return depth <= 19 ? depth - 8 : depth - 9;
+  return std::min(depth - 8, Canvas::kLargestGrade);
 }
 
 // The dyadic at or below the number on the grid of step 2^exponent, as a double.

@@ -58,6 +58,8 @@ CellEscape cell_escape(const ParameterCell& cell, std::uint64_t steps) {
   return found;
 }
 
-bool is_cell_in_closed_form(const ParameterCell& cell) { return is_cell_in_cardioid(cell) || is_cell_in_period_two_disc(cell); }
+bool is_cell_in_closed_form(const ParameterCell& cell) {
+  return is_cell_in_cardioid(cell) || is_cell_in_period_two_disc(cell);
+}
 
 }  // namespace merestone

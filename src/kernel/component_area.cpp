@@ -18,7 +18,8 @@ std::optional<Failure> out_of_range(const Component& c) {
   if (c.period < 1 || c.period > kLongestComponentPeriod) return Failure{"the period must be 1 to 20000"};
   if (c.coefficients < 1 || c.coefficients > kMostComponentCoefficients)
     return Failure{"the number of coefficients must be 1 to 512"};
-  if (c.bits < kFewestComponentBits || c.bits > kMostComponentBits) return Failure{"the precision must be 53 to 4096 bits"};
+  if (c.bits < kFewestComponentBits || c.bits > kMostComponentBits)
+    return Failure{"the precision must be 53 to 4096 bits"};
   if (c.radius_exponent < kLeastRadiusExponent || c.radius_exponent > 0)
     return Failure{"the radius must be 2^-1000 to 1"};
   if (std::uint64_t{c.period} * c.coefficients > kMostSeriesTerms)
@@ -86,8 +87,7 @@ Result<ComponentArea> establish_component(const Component& component) {
   if (const auto* problem = std::get_if<NotEstablished>(&isolated)) return Failure{problem->reason};
   ComponentArea area;
   area.nucleus = narrowed(disc, std::get<IsolatedBy>(isolated), component);
-  const auto multiplier =
-      multiplier_series(area.nucleus, component.period, component.coefficients, component.bits);
+  const auto multiplier = multiplier_series(area.nucleus, component.period, component.coefficients, component.bits);
   if (!multiplier) return Failure{"the enclosure of the cycle at the nucleus is wider than 1 or beyond 2^64"};
   const UnivalentSeries map = reverted(*multiplier, component.bits);
   area.conformal_radius_lower = map.modulus_lower(1);

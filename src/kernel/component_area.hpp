@@ -7,9 +7,9 @@ namespace merestone {
 
 /// What is proved of one hyperbolic component (Lemma A2).
 struct ComponentArea {
-  DiscEnclosure nucleus;         // encloses it; its im is 0 exactly if the nucleus is real
+  DiscEnclosure nucleus;          // encloses it; its im is 0 exactly if the nucleus is real
   Dyadic conformal_radius_lower;  // |a_1|; the component contains the open disc of a quarter of that about the nucleus
-  Dyadic lower;                  // of the area of this component alone, without its mirror image
+  Dyadic lower;                   // of the area of this component alone, without its mirror image
 };
 
 /// Proves that exactly one nucleus of exact period `period` lies in the entry's disc (Lemma P2), real if im = 0, and

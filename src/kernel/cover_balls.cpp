@@ -23,7 +23,8 @@ double rounded(const Dyadic& x, arf_rnd_t rounding) { return arf_get_d(x.raw(), 
 
 // The disc about the rounded offset that lies in the given one.
 OffsetDisc around(const ParameterCell& cell, const Disc& disc) {
-  const double x = rounded(disc.centre.re - Dyadic(cell.x), ARF_RND_NEAR), y = rounded(disc.centre.im - Dyadic(cell.y), ARF_RND_NEAR);
+  const double x = rounded(disc.centre.re - Dyadic(cell.x), ARF_RND_NEAR),
+               y = rounded(disc.centre.im - Dyadic(cell.y), ARF_RND_NEAR);
   const double radius = rounded(disc.radius, ARF_RND_DOWN) * (1 - 0x1p-50) - 0x1p-51 * (std::abs(x) + std::abs(y));
   return {x, y, std::max(radius, 0.0), 0};
 }

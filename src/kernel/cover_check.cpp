@@ -24,8 +24,8 @@ std::string decimal(double x) {
 }
 
 Failure not_established(const char* tree, const ParameterCell& cell, const TreeCell& at, const std::string& why) {
-  return Failure{std::string(tree) + " mark at " + decimal(cell.x) + (std::signbit(cell.y) ? "-" : "+") + decimal(std::abs(cell.y)) +
-                 "i, depth " + std::to_string(at.depth) + ": " + why};
+  return Failure{std::string(tree) + " mark at " + decimal(cell.x) + (std::signbit(cell.y) ? "-" : "+") +
+                 decimal(std::abs(cell.y)) + "i, depth " + std::to_string(at.depth) + ": " + why};
 }
 
 // Which marks are to be established in both ways; the outside ones have the first numbers.
@@ -44,11 +44,13 @@ class BlockCheck {
       : square_(square), block_(block), mode_(mode), proof_{{}, Canvas(block.grade), Canvas(block.grade)} {}
 
   Result<CoverProof> run(CoverRules rules, const CoverWindow& window) {
-    const auto outside = read_cover_tree(block_.outside, block_.grade), inside = read_cover_tree(block_.inside, block_.grade);
+    const auto outside = read_cover_tree(block_.outside, block_.grade),
+               inside = read_cover_tree(block_.inside, block_.grade);
     if (!outside) return Failure{"outside: " + outside.failure().message};
     if (!inside) return Failure{"inside: " + inside.failure().message};
     if (inside->size() != block_.inside_by.size())
-      return Failure{"inside: " + std::to_string(inside->size()) + " marks, and a cycle for " + std::to_string(block_.inside_by.size())};
+      return Failure{"inside: " + std::to_string(inside->size()) + " marks, and a cycle for " +
+                     std::to_string(block_.inside_by.size())};
     proof_.figures.outside_marks = outside->size(), proof_.figures.inside_marks = inside->size();
     sample_ = drawn(mode_, outside->size() + inside->size());
     if (auto fault = rules == CoverRules::all ? take_discs(*outside) : take_escapes(*outside)) return *fault;
@@ -82,7 +84,8 @@ class BlockCheck {
 
   // The disc in doubles, or in balls if those fail or are asked for; painted.
   template <class InBalls>
-  Fault paint(Canvas& canvas, const char* tree, const TreeCell& at, OffsetDisc disc, std::uint64_t number, InBalls&& in_balls) {
+  Fault paint(Canvas& canvas, const char* tree, const TreeCell& at, OffsetDisc disc, std::uint64_t number,
+              InBalls&& in_balls) {
     const ParameterCell cell = square_.cell(at);
     const bool is_shown = !mode_.exact && disc.radius > 0, is_compared = is_shown && is_in_balls_too(number);
     if (!is_shown || is_compared) {
@@ -141,10 +144,12 @@ BlockCheck::Fault BlockCheck::take_escapes(const std::vector<TreeCell>& marks) {
     const ParameterCell cell = square_.cell(marks[k]);
     const CellEscape escape = cell_escape(cell, mode_.steps);
     const bool is_shown = escape.is_proved && !mode_.exact;
-    if (!is_shown && escape.index == 0) return not_established("outside", cell, marks[k], "|z_n| > 2 over the cell for no n");
+    if (!is_shown && escape.index == 0)
+      return not_established("outside", cell, marks[k], "|z_n| > 2 over the cell for no n");
     if (!is_shown && !may_fall_back()) return too_many_fallbacks();
     if (!is_shown || is_in_balls_too(k))
-      if (auto fault = escape_in_balls(cell, escape.index)) return not_established("outside", cell, marks[k], fault->message);
+      if (auto fault = escape_in_balls(cell, escape.index))
+        return not_established("outside", cell, marks[k], fault->message);
     square_.paint_cell(proof_.outside, marks[k]);
   }
   return std::nullopt;
@@ -164,9 +169,11 @@ BlockCheck::Fault BlockCheck::take_inside(const TreeCell& at, const CoverInside&
   if (by.period == 0) return take_closed_form(at, number);
   const ParameterCell cell = square_.cell(at);
   if (by.period > mode_.steps)
-    return not_established("inside", cell, at, "period " + std::to_string(by.period) + " is above " + std::to_string(mode_.steps));
+    return not_established("inside", cell, at,
+                           "period " + std::to_string(by.period) + " is above " + std::to_string(mode_.steps));
   if (!(std::abs(by.x) <= 4 && std::abs(by.y) <= 4 && by.radius >= 0x1p-200 && by.radius <= 4))
-    return not_established("inside", cell, at, "the attracting disc is not within 4, or its radius not from 2^-200 to 4");
+    return not_established("inside", cell, at,
+                           "the attracting disc is not within 4, or its radius not from 2^-200 to 4");
   return paint(proof_.inside, "inside", at, interior_offset(cell.x, cell.y, by), number,
                [&](const ParameterCell& c) { return interior_in_balls(c, by); });
 }
@@ -174,13 +181,16 @@ BlockCheck::Fault BlockCheck::take_inside(const TreeCell& at, const CoverInside&
 BlockCheck::Fault BlockCheck::count(const CoverWindow& window) {
   CoverFigures& figures = proof_.figures;
   if (proof_.outside.overlaps(proof_.inside))
-    return Failure{"a fine cell is painted outside and inside: an error in this program or its libraries, not in the block"};
+    return Failure{
+        "a fine cell is painted outside and inside: an error in this program or its libraries, not in the block"};
   figures.outside_cells = proof_.outside.painted_in(window.touching);
   figures.inside_cells = proof_.inside.painted_in(window.within);
   const auto short_of = [](const char* what, std::uint64_t claimed, std::uint64_t painted) {
-    return Failure{std::to_string(claimed) + " fine cells are claimed to be " + what + ", and the marks show " + std::to_string(painted)};
+    return Failure{std::to_string(claimed) + " fine cells are claimed to be " + what + ", and the marks show " +
+                   std::to_string(painted)};
   };
-  if (figures.outside_cells < block_.outside_cells) return short_of("outside", block_.outside_cells, figures.outside_cells);
+  if (figures.outside_cells < block_.outside_cells)
+    return short_of("outside", block_.outside_cells, figures.outside_cells);
   if (figures.inside_cells < block_.inside_cells) return short_of("inside", block_.inside_cells, figures.inside_cells);
   return std::nullopt;
 }
@@ -190,7 +200,8 @@ BlockCheck::Fault BlockCheck::count(const CoverWindow& window) {
 Result<CoverProof> establish_cover_block(const CoverSquare& square, CoverRules rules, const CoverWindow& window,
                                          const CoverBlock& block, const CoverMode& mode) {
   if (block.grade != square.grade)
-    return Failure{"the block is of grade " + std::to_string(block.grade) + " and its square of grade " + std::to_string(square.grade)};
+    return Failure{"the block is of grade " + std::to_string(block.grade) + " and its square of grade " +
+                   std::to_string(square.grade)};
   const Result<MarkedSquare> marked = MarkedSquare::of(square);
   if (!marked) return marked.failure();
   return BlockCheck(*marked, block, mode).run(rules, window);

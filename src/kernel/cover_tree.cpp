@@ -26,7 +26,8 @@ class TreeReader {
       std::vector<TreeCell> level;
       level.swap(split_);
       for (const TreeCell& cell : level) {
-        if (++at_ == tree_.size()) return malformed(at_, "is missing: a cell of depth " + std::to_string(cell.depth) + " is split");
+        if (++at_ == tree_.size())
+          return malformed(at_, "is missing: a cell of depth " + std::to_string(cell.depth) + " is split");
         if (tree_[at_] == 0) return malformed(at_, "is 0, and marks and splits nothing");
         if (!take_quarters(cell, tree_[at_])) return too_deep();
       }
@@ -45,7 +46,9 @@ class TreeReader {
 
   bool take_quarters(const TreeCell& cell, unsigned byte) {
     for (unsigned quarter = 0; quarter < 4; ++quarter)
-      if (!take({2 * cell.column + (quarter & 1), 2 * cell.row + (quarter >> 1), cell.depth + 1}, byte >> (2 * quarter) & 3)) return false;
+      if (!take({2 * cell.column + (quarter & 1), 2 * cell.row + (quarter >> 1), cell.depth + 1},
+                byte >> (2 * quarter) & 3))
+        return false;
     return true;
   }
 
@@ -59,11 +62,14 @@ class TreeReader {
 
 }  // namespace
 
-Result<std::vector<TreeCell>> read_cover_tree(const CoverTree& tree, std::uint32_t grade) { return TreeReader(tree, grade).read(); }
+Result<std::vector<TreeCell>> read_cover_tree(const CoverTree& tree, std::uint32_t grade) {
+  return TreeReader(tree, grade).read();
+}
 
 std::uint64_t marks_of(const CoverTree& tree) {
   std::uint64_t marks = 0;
-  for (const std::uint8_t byte : tree) marks += static_cast<std::uint64_t>(std::popcount(static_cast<unsigned>(byte) & 0x55u));
+  for (const std::uint8_t byte : tree)
+    marks += static_cast<std::uint64_t>(std::popcount(static_cast<unsigned>(byte) & 0x55u));
   return marks;
 }
 

@@ -49,16 +49,16 @@ template <class V>
 
 }  // namespace detail
 
-/// z_n and its first two derivatives with respect to c as rounded, with upper bounds of their errors (Lemma E8). V is double,
-/// or a vector of doubles for as many parameters. Starts as n = 0, when all of it is 0.
+/// z_n and its first two derivatives with respect to c as rounded, with upper bounds of their errors (Lemma E8). V is
+/// double, or a vector of doubles for as many parameters. Starts as n = 0, when all of it is 0.
 template <class V>
 struct ExteriorJet {
   V zx{}, zy{}, ax{}, ay{}, bx{}, by{};  // z, z', z''
   V ez{}, ea{}, eb{};                    // bounds of the errors
 };
 
-/// From n to n + 1 at the parameter cx + i cy, exactly. Requires |cx + i cy| <= 2.09. No branch, no root, no division: in each
-/// lane of a vector the result is that of doubles, bit for bit.
+/// From n to n + 1 at the parameter cx + i cy, exactly. Requires |cx + i cy| <= 2.09. No branch, no root, no division:
+/// in each lane of a vector the result is that of doubles, bit for bit.
 template <class V>
 [[gnu::always_inline]] inline void advance(ExteriorJet<V>& j, const V& cx, const V& cy) {
   constexpr double u = 0x1p-53;

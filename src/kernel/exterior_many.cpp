@@ -18,13 +18,18 @@ struct alignas(64) Lanes {
 };
 
 template <class V>
-[[gnu::always_inline]] inline void get(V& to, const double* from) { std::memcpy(&to, from, sizeof to); }
+[[gnu::always_inline]] inline void get(V& to, const double* from) {
+  std::memcpy(&to, from, sizeof to);
+}
 template <class V>
-[[gnu::always_inline]] inline void put(double* to, const V& from) { std::memcpy(to, &from, sizeof from); }
+[[gnu::always_inline]] inline void put(double* to, const V& from) {
+  std::memcpy(to, &from, sizeof from);
+}
 
 template <class V>
 [[gnu::always_inline]] inline void load(ExteriorJet<V>& j, const Lanes& from, int i) {
-  get(j.zx, from.zx + i), get(j.zy, from.zy + i), get(j.ax, from.ax + i), get(j.ay, from.ay + i), get(j.bx, from.bx + i);
+  get(j.zx, from.zx + i), get(j.zy, from.zy + i), get(j.ax, from.ax + i), get(j.ay, from.ay + i),
+      get(j.bx, from.bx + i);
   get(j.by, from.by + i), get(j.ez, from.ez + i), get(j.ea, from.ea + i), get(j.eb, from.eb + i);
 }
 
@@ -131,7 +136,8 @@ class Batch {
   std::span<ExteriorOffset> results_;
   Lanes before_{}, after_{};
   std::size_t position_[kLanes] = {}, next_ = 0, busy_ = 0;
-  std::uint64_t start_[kLanes] = {}, now_ = 0, first_end_ = 0;  // steps: of each lane's start, in all, and of the next end
+  std::uint64_t start_[kLanes] = {}, now_ = 0,
+                first_end_ = 0;  // steps: of each lane's start, in all, and of the next end
 };
 
 }  // namespace
@@ -146,7 +152,8 @@ std::vector<int> exterior_widths() {
   return widths;
 }
 
-void exterior_offsets(std::span<const ExactParameter> at, std::uint32_t steps, std::span<ExteriorOffset> results, int width) {
+void exterior_offsets(std::span<const ExactParameter> at, std::uint32_t steps, std::span<ExteriorOffset> results,
+                      int width) {
   Batch(at, steps, results).run(follow_by(width));
 }
 

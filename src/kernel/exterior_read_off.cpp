@@ -34,7 +34,8 @@ double tanh_ratio(double x) {
   return (135135 + q * (17325 + q * (378 + q))) / (135135 + q * (62370 + q * (3150 + q * 28)));
 }
 
-// A = z'/z, B = z''/z - A² with bounds of their errors: first of the rounding and the orbit's errors, then of Lemma E3's tail too.
+// A = z'/z, B = z''/z - A² with bounds of their errors: first of the rounding and the orbit's errors, then of Lemma
+// E3's tail too.
 struct Ratios {
   double z, room, ez;  // |z| as rounded, a lower bound of |z| less its error, and that error
   double Ax, Ay, A, Bx, By, B, eA, eB;

@@ -18,8 +18,8 @@ constexpr NearComplex kOne{1, 0, 0};
 // z - (x + iy), midpoints subtracted: the rounding is within that of the modulus (Lemma E8)
 NearComplex offset(const NearComplex& z, double x, double y) { return {z.x - x, z.y - y, z.error}; }
 
-// The ranges of the disc V of `by` under f_c^k, k = 0, …, period - 1, if f_c^period(V) lies in the interior of V and V is
-// disjoint from f_c^k(V) for the periods k that the cycle might have instead.
+// The ranges of the disc V of `by` under f_c^k, k = 0, …, period - 1, if f_c^period(V) lies in the interior of V and V
+// is disjoint from f_c^k(V) for the periods k that the cycle might have instead.
 std::optional<Cycle> attracting_cycle(double cx, double cy, const CoverInside& by) {
   if (!(by.radius >= 0x1p-200 && by.radius <= 4)) return std::nullopt;
   const auto shorter = proper_prime_cofactors(by.period);

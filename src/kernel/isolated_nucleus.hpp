@@ -15,8 +15,8 @@ struct IsolatedBy {
   Dyadic distance;      // of the root from the centre, at most
 };
 
-/// Shows that exactly one nucleus of exact period `period` lies in the disc (Lemma P2, with g = z_period). It is real if
-/// the centre is. On failure: which inequality was not shown.
+/// Shows that exactly one nucleus of exact period `period` lies in the disc (Lemma P2, with g = z_period). It is real
+/// if the centre is. On failure: which inequality was not shown.
 std::variant<IsolatedBy, NotEstablished> isolate_nucleus(const Disc& disc, std::uint64_t period, slong bits);
 
 }  // namespace merestone

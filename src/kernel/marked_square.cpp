@@ -54,8 +54,10 @@ void MarkedSquare::paint(Canvas& canvas, const TreeCell& centre, const OffsetDis
   const double x = (2.0 * centre.column + 1) * half, y = (2.0 * centre.row + 1) * half;
   const double dx = disc.x * fine_cells_, dy = disc.y * fine_cells_, radius = disc.radius * fine_cells_;
   const double farthest = 4.0 * canvas.side();  // for paint_disc
-  if (std::abs(x + dx) <= farthest && std::abs(y + dy) <= farthest) canvas.paint_disc(x + dx, y + dy, radius);
-  else canvas.paint_disc(x, y, radius * (1 - 0x1p-48) - std::sqrt(dx * dx + dy * dy));
+  if (std::abs(x + dx) <= farthest && std::abs(y + dy) <= farthest)
+    canvas.paint_disc(x + dx, y + dy, radius);
+  else
+    canvas.paint_disc(x, y, radius * (1 - 0x1p-48) - std::sqrt(dx * dx + dy * dy));
 }
 
 void MarkedSquare::paint_cell(Canvas& canvas, const TreeCell& cell) const {

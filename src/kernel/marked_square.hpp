@@ -14,8 +14,8 @@ class MarkedSquare {
   static Result<MarkedSquare> of(const CoverSquare& square);
 
   ParameterCell cell(const TreeCell& at) const;
-  /// Paints fine cells that lie in the disc about the centre of the cell (Lemma N2): of a disc too far to be painted, those in
-  /// the widest about the cell's centre itself.
+  /// Paints fine cells that lie in the disc about the centre of the cell (Lemma N2): of a disc too far to be painted,
+  /// those in the widest about the cell's centre itself.
   void paint(Canvas& canvas, const TreeCell& centre, const OffsetDisc& disc) const;
   void paint_cell(Canvas& canvas, const TreeCell& cell) const;
 

@@ -6,8 +6,9 @@
 
 namespace merestone {
 
-/// A complex number within `error` of x + iy (Lemma E8, numbers). Sum, product and quotient enclose the results for all choices
-/// of elements; overflow makes the error infinite or not a number, and a test that is written as `error < …` false.
+/// A complex number within `error` of x + iy (Lemma E8, numbers). Sum, product and quotient enclose the results for all
+/// choices of elements; overflow makes the error infinite or not a number, and a test that is written as `error < …`
+/// false.
 struct NearComplex {
   double x = 0, y = 0, error = 0;
 
@@ -19,7 +20,7 @@ struct NearComplex {
 
 namespace detail {
 
-inline constexpr double kNearUnit = 0x1p-53;          // u
+inline constexpr double kNearUnit = 0x1p-53;           // u
 inline constexpr double kNearInflation = 1 + 0x1p-48;  // covers the rounding of a bound
 inline constexpr double kNearGuard = 0x1p-500;         // covers underflow
 
@@ -43,14 +44,16 @@ inline NearComplex operator-(const NearComplex& a, const NearComplex& b) { retur
 inline NearComplex operator*(const NearComplex& a, const NearComplex& b) {
   constexpr double kProduct = 0x1.2p+1 * detail::kNearUnit;  // 2.25 u, above sqrt(5) u
   const double p = a.modulus_upper(), q = b.modulus_upper();
-  return detail::near(a.x * b.x - a.y * b.y, a.x * b.y + a.y * b.x, p * b.error + (q + b.error) * a.error + kProduct * (p * q));
+  return detail::near(a.x * b.x - a.y * b.y, a.x * b.y + a.y * b.x,
+                      p * b.error + (q + b.error) * a.error + kProduct * (p * q));
 }
 
 /// z² + c for the exact c = cx + i cy.
 inline NearComplex next_value(const NearComplex& z, double cx, double cy) {
   const double p = z.modulus_upper();
   const NearComplex next{z.x * z.x - z.y * z.y + cx, 2 * z.x * z.y + cy, 0};
-  return detail::near(next.x, next.y, (2 * p + z.error) * z.error + detail::kNearUnit * (2 * p * p + next.modulus_upper()));
+  return detail::near(next.x, next.y,
+                      (2 * p + z.error) * z.error + detail::kNearUnit * (2 * p * p + next.modulus_upper()));
 }
 
 /// An error that is not a number where b may be 0, or nearly.

@@ -3,22 +3,13 @@
 #include <cmath>
 
 #include "lanes/attraction.hpp"
+#include "search/plain_complex.hpp"
 
 namespace merestone {
 
 namespace {
 
-struct Complex {
-  double x, y;
-};
-
-Complex operator-(Complex a, Complex b) { return {a.x - b.x, a.y - b.y}; }
-Complex operator*(Complex a, Complex b) { return {a.x * b.x - a.y * b.y, a.x * b.y + a.y * b.x}; }
-Complex operator/(Complex a, Complex b) {
-  const double n = b.x * b.x + b.y * b.y;
-  return {(a.x * b.x + a.y * b.y) / n, (a.y * b.x - a.x * b.y) / n};
-}
-double approx_modulus(Complex a) { return std::sqrt(a.x * a.x + a.y * a.y); }
+using Complex = PlainComplex;
 
 struct Return {
   Complex image, multiplier;

@@ -162,7 +162,7 @@ class Inputs(CheckTest):
         path = self.file("a.mere.json", document(near_root()))
         for words in ([], ["--nope", path], ["--max-work", "many", path], ["--max-work", "-1", path],
                       ["--max-work", "0", path], ["--threads", "0", path],
-                      ["--sample", "0", path], ["--seed", "1", path], ["-", "-"], ["--quiet", "--json", path]):
+                      ["--sample", "0", path], ["--seed", "-1", path], ["-", "-"], ["--quiet", "--json", path]):
             with self.subTest(words=words):
                 run = Run(*words)
                 self.assert_fault(run, 2, "'merestone-check --help' explains")

@@ -1,5 +1,5 @@
-// Lemma N2: the cells that a canvas paints lie in the disc, decided in exact arithmetic (GMP) corner by corner, and hardly any
-// that lies in it is missed. Counting by hand where squares are painted.
+// Lemma N2: the cells that a canvas paints lie in the disc, decided in exact arithmetic (GMP) corner by corner, and
+// hardly any that lies in it is missed. Counting by hand where squares are painted.
 
 #include "kernel/canvas.hpp"
 
@@ -32,7 +32,8 @@ TrialDisc any_disc(PointSource& source, double side) {
   if (source.one_in(4)) y = std::floor(y) + 0.5;
   double r = uniform(source, 0, source.one_in(3) ? 8 * side : source.one_in(2) ? side : 3);
   if (source.one_in(4)) r = std::floor(r) + std::ldexp(1.0, static_cast<int>(source.between(-30, -1)));
-  if (source.one_in(8)) r = std::hypot(std::floor(x) - x, std::floor(y) + 1 - y) + (source.one_in(2) ? 0x1p-19 : 0);  // a corner
+  if (source.one_in(8))
+    r = std::hypot(std::floor(x) - x, std::floor(y) + 1 - y) + (source.one_in(2) ? 0x1p-19 : 0);  // a corner
   if (source.one_in(20)) r = std::ldexp(1.0, static_cast<int>(source.between(-40, 60)));
   return {x, y, r};
 }
@@ -62,8 +63,10 @@ TEST_CASE("cells that are painted lie in the disc, and none is missed that lies 
     for (std::uint32_t row = 0; row < canvas.side(); ++row)
       for (std::uint32_t column = 0; column < canvas.side(); ++column) {
         // Lemma N2 says a little more than that the cell lies in the disc
-        if (canvas.is_painted(column, row)) REQUIRE(lies_in(column, row, disc, mpq_class(disc.radius) - power_of_two(-21)));
-        else REQUIRE_FALSE(lies_in(column, row, disc, least));
+        if (canvas.is_painted(column, row))
+          REQUIRE(lies_in(column, row, disc, mpq_class(disc.radius) - power_of_two(-21)));
+        else
+          REQUIRE_FALSE(lies_in(column, row, disc, least));
       }
     painted += canvas.painted();
     off_edge += canvas.painted() > 0 && (disc.x < 0 || disc.y > canvas.side());
@@ -96,8 +99,17 @@ TEST_CASE("on the largest canvas the ends of rows are right") {
 TEST_CASE("discs that are none paint nothing") {
   Canvas canvas(4);
   const double nan = std::nan(""), infinity = HUGE_VAL;
-  for (const TrialDisc& disc : {TrialDisc{8, 8, 0}, {8, 8, -3}, {8, 8, nan}, {8, 8, 0x1p-21}, {nan, 8, 5}, {8, nan, 5}, {infinity, 8, 5},
-                                {8, -infinity, 5}, {8, 8, -infinity}, {64.5, 8, 60}, {8, -64.5, 90}})
+  for (const TrialDisc& disc : {TrialDisc{8, 8, 0},
+                                {8, 8, -3},
+                                {8, 8, nan},
+                                {8, 8, 0x1p-21},
+                                {nan, 8, 5},
+                                {8, nan, 5},
+                                {infinity, 8, 5},
+                                {8, -infinity, 5},
+                                {8, 8, -infinity},
+                                {64.5, 8, 60},
+                                {8, -64.5, 90}})
     CHECK_FALSE(canvas.paint_disc(disc.x, disc.y, disc.radius));
   CHECK(canvas.painted() == 0);
   CHECK(canvas.paint_disc(8, 8, infinity));  // the whole plane

@@ -1,5 +1,6 @@
-// Cells that escape whole (Lemmas E1, E2, E8) and cells within the components of periods 1 and 2 (Lemma I3). The truth comes from
-// MPFR's orbits at the cell's corners, sides and inside (computed), and from the inequalities of Lemma I3 in exact arithmetic.
+// Cells that escape whole (Lemmas E1, E2, E8) and cells within the components of periods 1 and 2 (Lemma I3). The truth
+// comes from MPFR's orbits at the cell's corners, sides and inside (computed), and from the inequalities of Lemma I3 in
+// exact arithmetic.
 
 #include "kernel/cell_rules.hpp"
 
@@ -19,8 +20,11 @@ namespace {
 
 // A point of the closed cell: a corner, on a side, or anywhere.
 Complex point_of(PointSource& source, const ParameterCell& cell) {
-  const auto part = [&] { return source.one_in(2) ? ratio(source.one_in(2) ? 1 : -1, 1) : ratio(source.between(-64, 64), 64); };
-  return {mpq_class(cell.x) + part() * mpq_class(cell.half_side), mpq_class(cell.y) + part() * mpq_class(cell.half_side)};
+  const auto part = [&] {
+    return source.one_in(2) ? ratio(source.one_in(2) ? 1 : -1, 1) : ratio(source.between(-64, 64), 64);
+  };
+  return {mpq_class(cell.x) + part() * mpq_class(cell.half_side),
+          mpq_class(cell.y) + part() * mpq_class(cell.half_side)};
 }
 
 bool is_in_component(const Complex& c, int period) {
@@ -53,10 +57,13 @@ TEST_CASE("where a cell escapes, all of its points have left |z| <= 2 at that in
 
 TEST_CASE("a cell with a member does not escape, and a small one outside does") {
   PointSource source(7502);
-  for (const Complex& member : {Complex{ratio(1, 4), 0}, {ratio(-3, 4), 0}, {-2, 0}, {0, 1}, {0, -1}, {ratio(-7, 4), 0}, {0, 0}})
+  for (const Complex& member :
+       {Complex{ratio(1, 4), 0}, {ratio(-3, 4), 0}, {-2, 0}, {0, 1}, {0, -1}, {ratio(-7, 4), 0}, {0, 0}})
     for (int e = -50; e < 2; ++e) {
       const double half = std::ldexp(1.0, e);
-      const auto beside = [&](const mpq_class& at) { return at.get_d() + half * static_cast<double>(source.between(-1, 1)); };
+      const auto beside = [&](const mpq_class& at) {
+        return at.get_d() + half * static_cast<double>(source.between(-1, 1));
+      };
       const ParameterCell cell{beside(member.re), beside(member.im), half};
       const mpq_class dx = abs(mpq_class(cell.x) - member.re), dy = abs(mpq_class(cell.y) - member.im);
       if (dx <= half && dy <= half) CHECK_FALSE(cell_escape(cell, 20'000).is_proved);
@@ -93,8 +100,15 @@ TEST_CASE("a cell in a closed form lies in it, by exact arithmetic along its rim
 }
 
 TEST_CASE("cells that reach out of the closed forms are refused") {
-  for (const ParameterCell& cell : {ParameterCell{0.25, 0, 0x1p-50}, {-0.75, 0, 0x1p-50}, {-1.25, 0, 0x1p-40}, {0, 0, 0.5}, {-1, 0, 0.25},
-                                    {2, 2, 0.125}, {std::nan(""), 0, 0.01}, {0, 0, std::nan("")}, {-1, 0.1875, 0.125}}) {
+  for (const ParameterCell& cell : {ParameterCell{0.25, 0, 0x1p-50},
+                                    {-0.75, 0, 0x1p-50},
+                                    {-1.25, 0, 0x1p-40},
+                                    {0, 0, 0.5},
+                                    {-1, 0, 0.25},
+                                    {2, 2, 0.125},
+                                    {std::nan(""), 0, 0.01},
+                                    {0, 0, std::nan("")},
+                                    {-1, 0.1875, 0.125}}) {
     CHECK_FALSE(is_cell_in_closed_form(cell));
     if (cell.x == cell.x && cell.half_side == cell.half_side) CHECK(closed_form_exactly(cell));
   }

@@ -75,7 +75,8 @@ TEST_CASE("a large disc is compared with all that it covers, not with the next e
 }
 
 TEST_CASE("a list out of order is refused") {
-  CHECK(fault({entry(1, 0, 0), entry(2, -1, 0)}) == "entry 1 (period 1) and entry 2 (period 2) are not in order of (re, im)");
+  CHECK(fault({entry(1, 0, 0), entry(2, -1, 0)}) ==
+        "entry 1 (period 1) and entry 2 (period 2) are not in order of (re, im)");
   CHECK(fault({entry(2, -1, 0.5), entry(2, -1, 0.25)}) != "");
 }
 

@@ -1,4 +1,5 @@
-// Trees of marked cells: what cover.hpp says of their bytes, by hand; and what goes in comes out, with a writer of the test's own.
+// Trees of marked cells: what cover.hpp says of their bytes, by hand; and what goes in comes out, with a writer of the
+// test's own.
 
 #include "kernel/cover_tree.hpp"
 
@@ -43,7 +44,8 @@ TEST_CASE("malformed trees are refused with the byte") {
   CHECK_THAT(fault_of({1, 1}, 3), Catch::Matchers::StartsWith("byte 1 of the tree is surplus"));
   CHECK_THAT(fault_of({2, 0x04, 0x01}, 3), Catch::Matchers::StartsWith("byte 2 of the tree is surplus"));
   CHECK_THAT(fault_of({2}, 0), Catch::Matchers::StartsWith("byte 0 of the tree splits a fine cell, of depth 0"));
-  CHECK_THAT(fault_of({2, 0x20, 1}, 1), Catch::Matchers::StartsWith("byte 1 of the tree splits a fine cell, of depth 1"));
+  CHECK_THAT(fault_of({2, 0x20, 1}, 1),
+             Catch::Matchers::StartsWith("byte 1 of the tree splits a fine cell, of depth 1"));
   CHECK(read_cover_tree({2, 0x20, 1}, 2));
 }
 
@@ -54,7 +56,8 @@ TEST_CASE("what is marked is read, and every shortened or lengthened tree is ref
     trees::Marks marked;
     for (std::uint64_t n = source.below(40); n > 0; --n) {
       const auto depth = static_cast<std::uint32_t>(source.below(grade + 1));
-      marked.insert({depth, static_cast<std::uint32_t>(source.below(1u << depth)), static_cast<std::uint32_t>(source.below(1u << depth))});
+      marked.insert({depth, static_cast<std::uint32_t>(source.below(1u << depth)),
+                     static_cast<std::uint32_t>(source.below(1u << depth))});
     }
     const CoverTree tree = trees::tree_of(marked, grade);
     const auto read = read_cover_tree(tree, grade);
@@ -62,7 +65,8 @@ TEST_CASE("what is marked is read, and every shortened or lengthened tree is ref
     REQUIRE(read->size() == marked.size());
     REQUIRE(merestone::marks_of(tree) == marked.size());
     for (const TreeCell& cell : *read) REQUIRE(marked.count({cell.depth, cell.column, cell.row}) == 1);
-    REQUIRE(std::is_sorted(read->begin(), read->end(), [](const TreeCell& a, const TreeCell& b) { return a.depth < b.depth; }));
+    REQUIRE(std::is_sorted(read->begin(), read->end(),
+                           [](const TreeCell& a, const TreeCell& b) { return a.depth < b.depth; }));
     if (tree.empty()) continue;
     CoverTree shorter = tree, longer = tree;
     shorter.pop_back(), longer.push_back(1);

@@ -19,7 +19,8 @@ inline CoverTree tree_of(const Marks& marked, std::uint32_t grade) {
   const auto has_within = [&](const TreeCell& cell) {
     return std::any_of(marked.begin(), marked.end(), [&](const Key& key) {
       const auto& [depth, column, row] = key;
-      return depth > cell.depth && column >> (depth - cell.depth) == cell.column && row >> (depth - cell.depth) == cell.row;
+      return depth > cell.depth && column >> (depth - cell.depth) == cell.column &&
+             row >> (depth - cell.depth) == cell.row;
     });
   };
   const auto code = [&](const TreeCell& cell) {

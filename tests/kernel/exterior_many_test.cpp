@@ -1,6 +1,6 @@
-// Lemmas E8, E3, U1 in the kernel's double precision. The truth comes from MPFR's orbits and derivatives (computed), from
-// Bieberbach's bound on MPFR's derivatives far beyond the index used, from MPFR's iteration at the rim, from boundary points that
-// are known exactly, and from the disc in balls.
+// Lemmas E8, E3, U1 in the kernel's double precision. The truth comes from MPFR's orbits and derivatives (computed),
+// from Bieberbach's bound on MPFR's derivatives far beyond the index used, from MPFR's iteration at the rim, from
+// boundary points that are known exactly, and from the disc in balls.
 
 #include "kernel/exterior_many.hpp"
 
@@ -48,7 +48,9 @@ std::vector<ExteriorOffset> offsets(const std::vector<ExactParameter>& at, std::
 }
 
 // Is a within `bound` of b?
-bool is_within(const Complex& a, const Complex& b, double bound) { return norm(a - b) <= mpq_class(bound) * mpq_class(bound); }
+bool is_within(const Complex& a, const Complex& b, double bound) {
+  return norm(a - b) <= mpq_class(bound) * mpq_class(bound);
+}
 
 bool reaches(const ExactParameter& c, const OffsetDisc& disc, const Complex& point) {
   const Complex centre = exact(c.x, c.y) + exact(disc.x, disc.y);
@@ -73,7 +75,8 @@ TEST_CASE("the root of the step is not below the root and hardly above it") {
   for (int e = -1000; e < 1000; ++e)
     for (int k = 0; k < 16; ++k) check(std::ldexp(1 + k / 16.0, e));
   for (std::uint64_t k = 0; k < reference::repeats(100'000); ++k)
-    check(std::ldexp(1 + std::ldexp(static_cast<double>(source.bits() >> 12), -52), static_cast<int>(source.between(-60, 60))));
+    check(std::ldexp(1 + std::ldexp(static_cast<double>(source.bits() >> 12), -52),
+                     static_cast<int>(source.between(-60, 60))));
 }
 
 TEST_CASE("orbits and derivatives are within their errors") {
@@ -102,17 +105,20 @@ TEST_CASE("one step from any jet is within the error that it adds") {
   PointSource source(7204);
   const auto any = [&](long least, long most) {
     const double m = 1 + std::ldexp(static_cast<double>(source.bits() >> 12), -52);
-    return source.one_in(20) ? 0.0 : std::ldexp(source.one_in(2) ? m : -m, static_cast<int>(source.between(least, most)));
+    return source.one_in(20) ? 0.0
+                             : std::ldexp(source.one_in(2) ? m : -m, static_cast<int>(source.between(least, most)));
   };
   const auto moved = [&](double x, double y, double by) { return exact(x, y) + mpq_class(by) * source.direction(); };
   for (std::uint64_t k = 0; k < reference::repeats(40'000); ++k) {
     ExteriorJet<double> jet;
-    jet.zx = any(-8, 0), jet.zy = any(-8, 0), jet.ax = any(-2, 30), jet.ay = any(-2, 30), jet.bx = any(-2, 60), jet.by = any(-2, 60);
+    jet.zx = any(-8, 0), jet.zy = any(-8, 0), jet.ax = any(-2, 30), jet.ay = any(-2, 30), jet.bx = any(-2, 60),
+    jet.by = any(-2, 60);
     const bool is_exact = source.one_in(3);
     jet.ez = is_exact ? 0 : std::abs(any(-60, -2)), jet.ea = is_exact ? 0 : std::abs(any(-60, 20));
     jet.eb = is_exact ? 0 : std::abs(any(-60, 50));
     const double cx = any(-6, 0), cy = any(-6, -1);
-    const Complex z = moved(jet.zx, jet.zy, jet.ez), a = moved(jet.ax, jet.ay, jet.ea), b = moved(jet.bx, jet.by, jet.eb), two{2, 0};
+    const Complex z = moved(jet.zx, jet.zy, jet.ez), a = moved(jet.ax, jet.ay, jet.ea),
+                  b = moved(jet.bx, jet.by, jet.eb), two{2, 0};
     advance(jet, cx, cy);
     REQUIRE(is_within(z * z + exact(cx, cy), exact(jet.zx, jet.zy), jet.ez));
     REQUIRE(is_within(two * (z * a) + Complex{1, 0}, exact(jet.ax, jet.ay), jet.ea));
@@ -133,7 +139,8 @@ TEST_CASE("a disc differs from the disc in balls with more bits by its loss at m
     INFO("c = " << at[k].x << ", " << at[k].y << ", index " << found[k].index << ", loss " << disc.loss);
     const mpq_class theirs = reference::exact(balls->radius), ours = disc.radius;
     const Complex shift = reference::exact(balls->centre) - exact(at[k].x, at[k].y) - exact(disc.x, disc.y);
-    const mpq_class room = theirs * (1 + power_of_two(-38) + mpq_class(disc.loss)) - ours;  // it has its own loss, of the same tail
+    const mpq_class room =
+        theirs * (1 + power_of_two(-38) + mpq_class(disc.loss)) - ours;  // it has its own loss, of the same tail
     REQUIRE(room > 0);
     REQUIRE(norm(shift) <= room * room);
     REQUIRE(ours >= theirs * (1 - mpq_class(2 * disc.loss)));
@@ -154,12 +161,20 @@ TEST_CASE("points at the rim of a disc escape, and known members are missed") {
     if (disc.radius == 0) continue;
     ++discs;
     INFO("c = " << at[k].x << ", " << at[k].y);
-    for (const Complex& member : {Complex{ratio(1, 4), 0}, {ratio(-3, 4), 0}, {ratio(-5, 4), 0}, {ratio(-7, 4), 0}, {-2, 0}, {0, 1}, {0, -1}, {0, 0}})
+    for (const Complex& member : {Complex{ratio(1, 4), 0},
+                                  {ratio(-3, 4), 0},
+                                  {ratio(-5, 4), 0},
+                                  {ratio(-7, 4), 0},
+                                  {-2, 0},
+                                  {0, 1},
+                                  {0, -1},
+                                  {0, 0}})
       REQUIRE_FALSE(reaches(at[k], disc, member));
     const Complex centre = exact(at[k].x, at[k].y) + exact(disc.x, disc.y);
     const mpq_class almost = ratio(999, 1000) * mpq_class(disc.radius);
     for (int i = 0; i < 4; ++i)
-      REQUIRE(reference::escape_index(centre + almost * source.direction(), 2, 40 * std::uint64_t{found[k].index} + 20'000));
+      REQUIRE(reference::escape_index(centre + almost * source.direction(), 2,
+                                      40 * std::uint64_t{found[k].index} + 20'000));
   }
   CHECK(discs > reference::repeats(200));
 }
@@ -185,7 +200,8 @@ TEST_CASE("the map into the complement covers a disc, as MPFR's derivatives show
 }
 
 TEST_CASE("members have no disc") {
-  std::vector<ExactParameter> members = {{0, 0}, {-1, 0}, {-2, 0}, {0.25, 0}, {-0.75, 0}, {0, 1}, {0, -1}, {-1.25, 0}, {-1.75, 0}, {-0.125, 0.75}};
+  std::vector<ExactParameter> members = {{0, 0}, {-1, 0}, {-2, 0},    {0.25, 0},  {-0.75, 0},
+                                         {0, 1}, {0, -1}, {-1.25, 0}, {-1.75, 0}, {-0.125, 0.75}};
   for (int k = 0; k <= 200; ++k) members.push_back({-2 + 2.25 * k / 200, 0});  // [-2, 1/4]: Lemma I4
   PointSource source(7209);
   for (int k = 0; k < 500; ++k) {  // the main cardioid: c = l/2 - l²/4, pulled in a little
@@ -239,8 +255,9 @@ TEST_CASE("a jet that is not far out, or far away, or no number shows nothing") 
   CHECK(read_off_exterior(jet, 0.5, 0.5, index).radius > 0.01);
   CHECK(read_off_exterior(jet, 2.0, 0.7, index).radius == 0);  // |c| > 2.09
   CHECK(read_off_exterior(jet, 0.5, 0.5, 4).radius == 0);
-  for (double ExteriorJet<double>::*part : {&ExteriorJet<double>::zx, &ExteriorJet<double>::ax, &ExteriorJet<double>::bx,
-                                            &ExteriorJet<double>::ez, &ExteriorJet<double>::ea, &ExteriorJet<double>::eb})
+  for (double ExteriorJet<double>::*part :
+       {&ExteriorJet<double>::zx, &ExteriorJet<double>::ax, &ExteriorJet<double>::bx, &ExteriorJet<double>::ez,
+        &ExteriorJet<double>::ea, &ExteriorJet<double>::eb})
     for (const double wrong : {std::nan(""), HUGE_VAL}) {
       ExteriorJet<double> broken = jet;
       broken.*part = wrong;

@@ -1,5 +1,6 @@
-// Lemmas I1, I2 in the kernel's double precision. The truth comes from the closed forms of periods 1 and 2 (exact), from the
-// cycles that MPFR finds (computed), from difference quotients of MPFR's multipliers, and from the disc in balls.
+// Lemmas I1, I2 in the kernel's double precision. The truth comes from the closed forms of periods 1 and 2 (exact),
+// from the cycles that MPFR finds (computed), from difference quotients of MPFR's multipliers, and from the disc in
+// balls.
 
 #include "kernel/interior_offset.hpp"
 
@@ -38,7 +39,9 @@ Complex exact(double x, double y) { return {mpq_class(x), mpq_class(y)}; }
 
 }  // namespace
 
-TEST_CASE("an interior disc is covered by the inverse of the multiplier, as MPFR finds it, and agrees with the one in balls") {
+TEST_CASE(
+    "an interior disc is covered by the inverse of the multiplier, as MPFR finds it, and agrees with the one in "
+    "balls") {
   PointSource source(7401);
   std::uint64_t discs = 0, tight = 0;
   for (const stable::StableParameter& s : stable::stable_parameters(source, reference::repeats(60))) {
@@ -50,9 +53,11 @@ TEST_CASE("an interior disc is covered by the inverse of the multiplier, as MPFR
       const auto germ = reference::interior_germ(exact(t->x, t->y), s.period);
       if (!germ || norm(germ->a2) >= ratio(399, 100)) continue;
       ++discs;
-      INFO("c = " << t->x << ", " << t->y << ", period " << s.period << ", radius 2^" << exponent << ", loss " << disc.loss);
+      INFO("c = " << t->x << ", " << t->y << ", period " << s.period << ", radius 2^" << exponent << ", loss "
+                  << disc.loss);
       REQUIRE(reference::covers(*germ, exact(disc.x, disc.y), mpq_class(disc.radius)));
-      tight += !reference::covers(*germ, exact(disc.x, disc.y), mpq_class(disc.radius) * (1 + mpq_class(4 * disc.loss)));
+      tight +=
+          !reference::covers(*germ, exact(disc.x, disc.y), mpq_class(disc.radius) * (1 + mpq_class(4 * disc.loss)));
       const auto balls = merestone::interior_in_balls({t->x, t->y, 0x1p-30}, t->by);
       if (balls && disc.loss < 0.05) REQUIRE(merestone::agree(disc, *balls));
     }
@@ -79,8 +84,10 @@ TEST_CASE("in the components of periods 1 and 2 every point of the disc satisfie
     for (const Complex& unit : reference::unit_directions()) {
       const Complex rim = exact(x, y) + exact(disc.x, disc.y) + mpq_class(disc.radius) * unit;
       const mpq_class v = rim.re - ratio(1, 4), yy = rim.im * rim.im, q = v * v + yy, w = rim.re + 1;
-      if (period == 1) REQUIRE(q * (q + v) < yy / 4);
-      else REQUIRE(w * w + yy < ratio(1, 16));
+      if (period == 1)
+        REQUIRE(q * (q + v) < yy / 4);
+      else
+        REQUIRE(w * w + yy < ratio(1, 16));
     }
   }
   CHECK(discs > reference::repeats(300));
@@ -108,7 +115,10 @@ TEST_CASE("what is no attracting cycle of that exact period gives no disc") {
   }
   by = right, by.x = std::nan("");
   CHECK(interior_offset(x, y, by).radius == 0);
-  CHECK(interior_offset(0.3, 0, {1, 0.5, 0, 0x1p-4}).radius == 0);    // outside: 0.3 > 1/4
-  CHECK(interior_offset(0.25, 0, {1, 0.5, 0, 0x1p-4}).radius == 0);   // multiplier 1
+  CHECK(interior_offset(0.24, 0, {1, 0.4, 0, 0x1p-30}).radius > 0.001);  // multiplier 0.8
+  CHECK(interior_offset(0.24, 0, {2, 0.4, 0, 0x1p-30}).radius == 0);
+  CHECK(interior_offset(0.24, 0, {3, 0.4, 0, 0x1p-30}).radius == 0);
+  CHECK(interior_offset(0.3, 0, {1, 0.5, 0, 0x1p-4}).radius == 0);     // outside: 0.3 > 1/4
+  CHECK(interior_offset(0.25, 0, {1, 0.5, 0, 0x1p-4}).radius == 0);    // multiplier 1
   CHECK(interior_offset(-0.75, 0, {1, -0.5, 0, 0x1p-6}).radius == 0);  // multiplier -1
 }

@@ -21,6 +21,7 @@ import tempfile
 from dataclasses import dataclass
 from pathlib import Path
 
+import mutants_area
 import mutants_cover
 import mutants_discs
 import mutants_lanes
@@ -52,7 +53,8 @@ class Mutant:
 
 
 def all_mutants():
-    for module in (mutants_discs, mutants_rules, mutants_regions, mutants_safe_discs, mutants_cover, mutants_lanes):
+    for module in (mutants_discs, mutants_rules, mutants_regions, mutants_safe_discs, mutants_cover, mutants_lanes,
+                   mutants_area):
         for file, mutants in module.MUTANTS.items():
             for what, *texts in mutants:
                 yield Mutant(file, what, list(zip(texts[::2], texts[1::2], strict=True)))

@@ -110,4 +110,23 @@ MUTANTS = {
          "const double radius = std::ldexp(1.0, exponent);",
          "const double radius = std::ldexp(0.5, exponent);"),
     ],
+    "search/catalogue/catalogue.cpp": [
+        ("complete: more than there are taken for all",
+         "return count == number_of_nuclei(period);",
+         "return count <= number_of_nuclei(period);"),
+        ("complete: components of other periods counted",
+         "if (entry.component.period == period) count",
+         "if (entry.component.period <= period) count"),
+        ("catalogue: not in canonical order",
+         "std::pair(a.component.re, a.component.im) < std::pair(b.component.re, b.component.im)",
+         "std::pair(a.component.im, a.component.re) < std::pair(b.component.im, b.component.re)"),
+    ],
+    "search/catalogue/all_nuclei.cpp": [
+        ("number of nuclei: divisors' nuclei not taken off",
+         "if (period % d == 0) sum",
+         "if (period == d) sum"),
+        ("number of nuclei: sign of an odd number of primes",
+         "value = -value;",
+         "value = +value;"),
+    ],
 }

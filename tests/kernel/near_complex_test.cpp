@@ -1,5 +1,5 @@
-// Lemma E8, numbers: sums, products, quotients and steps enclose what exact arithmetic (GMP) gives for elements at the rims, and
-// the part of the error that is the rounding is not far above it.
+// Lemma E8, numbers: sums, products, quotients and steps enclose what exact arithmetic (GMP) gives for elements at the
+// rims, and the part of the error that is the rounding is not far above it.
 
 #include "kernel/near_complex.hpp"
 
@@ -32,8 +32,12 @@ NearComplex any_number(PointSource& source) {
 }
 
 Complex middle(const NearComplex& z) { return {mpq_class(z.x), mpq_class(z.y)}; }
-Complex element(PointSource& source, const NearComplex& z) { return middle(z) + mpq_class(z.error) * source.in_unit_disc(); }
-bool holds(const NearComplex& z, const Complex& value) { return norm(value - middle(z)) <= mpq_class(z.error) * mpq_class(z.error); }
+Complex element(PointSource& source, const NearComplex& z) {
+  return middle(z) + mpq_class(z.error) * source.in_unit_disc();
+}
+bool holds(const NearComplex& z, const Complex& value) {
+  return norm(value - middle(z)) <= mpq_class(z.error) * mpq_class(z.error);
+}
 
 }  // namespace
 
@@ -85,20 +89,24 @@ TEST_CASE("the disc is covered by every univalent map within the errors, and is 
   for (std::uint64_t k = 0; k < reference::repeats(4'000); ++k) {
     const double size = source.one_in(4) ? any_double(source, -60, 0) : any_double(source, -12, 0);
     const Complex turn = source.direction(), bend = mpq_class(1.999) * source.in_unit_disc();
-    const double e2 = source.one_in(3) ? 0 : std::abs(any_double(source, -40, -8)), e1 = source.one_in(3) ? 0 : std::abs(size) * e2;
-    const NearComplex f1{std::abs(size) * turn.re.get_d(), std::abs(size) * turn.im.get_d(), e1}, a2{bend.re.get_d(), bend.im.get_d(), e2};
+    const double e2 = source.one_in(3) ? 0 : std::abs(any_double(source, -40, -8)),
+                 e1 = source.one_in(3) ? 0 : std::abs(size) * e2;
+    const NearComplex f1{std::abs(size) * turn.re.get_d(), std::abs(size) * turn.im.get_d(), e1},
+        a2{bend.re.get_d(), bend.im.get_d(), e2};
     const OffsetDisc disc = univalent_offset(f1, a2);
     if (size == 0 || disc.radius == 0) continue;
     ++discs;
     INFO(f1.x << ' ' << f1.y << ' ' << e1 << ' ' << a2.x << ' ' << a2.y << ' ' << e2);
     const Complex offset{mpq_class(disc.x), mpq_class(disc.y)};
     for (int i = 0; i < 6; ++i) {
-      const reference::Germ germ{middle(f1) + mpq_class(e1) * source.direction(), middle(a2) + mpq_class(e2) * source.direction()};
+      const reference::Germ germ{middle(f1) + mpq_class(e1) * source.direction(),
+                                 middle(a2) + mpq_class(e2) * source.direction()};
       if (norm(germ.a2) >= ratio(3999, 1000)) continue;
       REQUIRE(reference::covers(germ, offset, mpq_class(disc.radius)));
     }
     if (norm(middle(a2)) < ratio(3999, 1000))
-      REQUIRE_FALSE(reference::covers({middle(f1), middle(a2)}, offset, mpq_class(disc.radius) * (1 + mpq_class(2 * disc.loss))));
+      REQUIRE_FALSE(
+          reference::covers({middle(f1), middle(a2)}, offset, mpq_class(disc.radius) * (1 + mpq_class(2 * disc.loss))));
   }
   CHECK(discs > reference::repeats(3'000));
 }

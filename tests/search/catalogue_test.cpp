@@ -125,7 +125,8 @@ TEST_CASE("a resolution finds components in order of size, and finer ones find m
     count = entries.size();
     const mpq_class area = total_area(entries);
     CHECK(area > before);
-    CHECK(area < decimal("1.5065918849") + decimal("0.0000000028"));  // statistical estimate (Förstemann 2012, verified)
+    CHECK(area <
+          decimal("1.5065918849") + decimal("0.0000000028"));  // statistical estimate (Förstemann 2012, verified)
     before = area;
   }
 }

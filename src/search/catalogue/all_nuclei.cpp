@@ -1,7 +1,6 @@
 #include "search/catalogue/all_nuclei.hpp"
 
 #include <algorithm>
-#include <complex>
 
 namespace merestone {
 
@@ -20,9 +19,9 @@ class Path {
     const Complex from = w_;
     double done = 0, part = kMostPart;
     while (done < 1) {
-      const double next = std::min(1.0, done + part);
-      if (step_to(from + next * (target - from))) {
-        done = next;
+      const double goal = std::min(1.0, done + part);
+      if (step_to(from + goal * (target - from))) {
+        done = goal;
         part = std::min(2 * part, kMostPart);
       } else if ((part /= 4) < kLeastPart) {
         return false;
@@ -42,7 +41,7 @@ class Path {
 
   // Newton's method, which must contract from its first step on, so that it stays with its solution.
   bool step_to(Complex w) {
-    constexpr double kContraction = 0.125, kSettled = 0x1p-40;
+    constexpr double kContraction = 0.125, kSettled = 0x1p-40, kRounding = 0x1p-50;
     constexpr int kMostSteps = 6;
     Complex c = c_;
     double first = 0, before = 0;
@@ -54,12 +53,12 @@ class Path {
       if (step > 0 && !(length <= kContraction * before)) return false;
       c = c - change;
       before = length;
-      if (length <= kSettled * first || length < 0x1p-50) break;
+      if (length > kSettled * first && length > kRounding) continue;
+      c_ = c;
+      w_ = w;
+      return true;
     }
-    if (!(before <= 0x1p-8 * first || before < 0x1p-48)) return false;
-    c_ = c;
-    w_ = w;
-    return true;
+    return false;
   }
 
   std::uint32_t n_;
@@ -87,7 +86,8 @@ std::vector<Complex> solutions(std::uint32_t n) {
 }
 
 // Adds the nuclei to which the solutions lead when w goes to 0 by way of `through`.
-void follow(const std::vector<Complex>& from, std::uint32_t period, Complex through, std::vector<ApproxNucleus>& found) {
+void follow(const std::vector<Complex>& from, std::uint32_t period, Complex through,
+            std::vector<ApproxNucleus>& found) {
   constexpr double kSettled = 0x1p-10;  // Newton's method goes no farther from the end of a path
   for (const Complex c : from) {
     Path path(period, c, kValue);

@@ -12,8 +12,8 @@ namespace merestone {
 std::uint64_t number_of_nuclei(std::uint32_t period);
 
 /// Looks for all nuclei of exact period `period` on or above the real axis: each solution of z_n(c) = w is followed
-/// from |w| > 2, where the solutions are known one by one, to w = 0. None may be missing: count them. None occurs twice.
-/// Work is about 2^period. Requires 1 <= period <= 24.
+/// from |w| > 2, where the solutions are known one by one, to w = 0. None may be missing: count them. None occurs
+/// twice. Work is about 2^period. Requires 1 <= period <= 24.
 std::vector<ApproxNucleus> approx_nuclei_of_period(std::uint32_t period);
 
 }  // namespace merestone

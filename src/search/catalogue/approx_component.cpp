@@ -60,7 +60,9 @@ void revert(const Series& lambda, ApproxComponent& component) {
   }
 }
 
-double term_of_area(PlainComplex a, std::size_t n) { return std::numbers::pi * static_cast<double>(n) * approx_norm(a); }
+double term_of_area(PlainComplex a, std::size_t n) {
+  return std::numbers::pi * static_cast<double>(n) * approx_norm(a);
+}
 
 }  // namespace
 

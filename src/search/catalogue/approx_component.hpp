@@ -12,7 +12,7 @@ struct ApproxComponent {
   static constexpr std::size_t kMost = 16;
 
   ApproxNucleus nucleus;
-  std::size_t terms = 0;                    // how many coefficients are here
+  std::size_t terms = 0;                  // how many coefficients are here
   std::array<PlainComplex, kMost> map{};  // a_1 first
 
   double approx_area() const;

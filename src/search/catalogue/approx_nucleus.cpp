@@ -11,8 +11,8 @@ struct Correction {
   double size;  // of the component, if the parameter is its nucleus
 };
 
-// One step of Newton's method at c. With D = z_p' the multiplier's derivative at a nucleus is 2 D times 2 z_1 ... 2 z_{p-1}
-// (Lemma A2), and the conformal radius is its inverse.
+// One step of Newton's method at c. With D = z_p' the multiplier's derivative at a nucleus is 2 D times 2 z_1 ... 2
+// z_{p-1} (Lemma A2), and the conformal radius is its inverse.
 Correction correction(std::uint32_t period, PlainComplex c) {
   PlainJet at{c, {1, 0}};
   double product = 1;

@@ -25,9 +25,9 @@ inline PlainJet next(const PlainJet& at, PlainComplex c) {
   return {at.z * at.z + c, {turned.x + 1, turned.y}};
 }
 
-/// Newton's method for a nucleus whose period divides `period`, or for its mirror image if that is in the lower half plane;
-/// with its least period as far as double precision tells. Nothing when it does not settle quickly within the distance
-/// `reach` of the start.
+/// Newton's method for a nucleus whose period divides `period`, or for its mirror image if that is in the lower half
+/// plane; with its least period as far as double precision tells. Nothing when it does not settle quickly within the
+/// distance `reach` of the start.
 std::optional<ApproxNucleus> approx_nucleus(std::uint32_t period, PlainComplex start, double reach);
 
 /// Is it one of these, as far as double precision tells? Requires that they are in canonical order.

@@ -85,9 +85,8 @@ class Catalogue {
     keep_one_of_each(known_);
     const std::size_t first = components_.size();
     components_.resize(first + nuclei.size());
-    for_each(nuclei.size(), [&](std::size_t i) {
-      components_[first + i] = approx_component(nuclei[i], terms(nuclei[i].size));
-    });
+    for_each(nuclei.size(),
+             [&](std::size_t i) { components_[first + i] = approx_component(nuclei[i], terms(nuclei[i].size)); });
     candidates_ = components_.size();
     return first;
   }

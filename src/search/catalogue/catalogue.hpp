@@ -17,7 +17,7 @@ struct CatalogueOptions {
 };
 
 inline constexpr std::uint32_t kLongestCompletePeriod = 20;
-inline constexpr int kFinestResolution = 22;
+inline constexpr int kFinestResolution = 20;
 
 /// How far it has got.
 struct CatalogueProgress {
@@ -25,10 +25,11 @@ struct CatalogueProgress {
   std::size_t candidates = 0, proved = 0;  // components
 };
 
-/// Finds hyperbolic components on or above the real axis - primitive ones from a grid, satellites from their parents - and
-/// has the kernel establish each; candidates that it does not establish are dropped. In canonical order, strictly
+/// Finds hyperbolic components on or above the real axis - primitive ones from a grid, satellites from their parents -
+/// and has the kernel establish each; candidates that it does not establish are dropped. In canonical order, strictly
 /// increasing by (re, im). Uses the threads of oneTBB.
-/// `go_on` is called now and then, from any of the threads; when it returns false, what has been proved so far is returned.
+/// `go_on` is called now and then, from any of the threads; when it returns false, what has been proved so far is
+/// returned.
 std::vector<CatalogueEntry> catalogue(const CatalogueOptions& options,
                                       const std::function<bool(const CatalogueProgress&)>& go_on);
 

@@ -7,8 +7,8 @@ namespace merestone {
 namespace {
 
 constexpr double kLeft = -2, kRight = 0.5, kTop = 1.15;  // M's upper half lies between
-constexpr double kFar = 16;           // |z|^2 of an orbit that has escaped
-constexpr double kDoubtful = 8;       // an estimate of a size, made at a neighbouring point, may be wrong by this factor
+constexpr double kFar = 16;                              // |z|^2 of an orbit that has escaped
+constexpr double kDoubtful = 8;  // an estimate of a size, made at a neighbouring point, may be wrong by this factor
 constexpr double kConverged = 1e-20;  // squared distance of z_n from itself after some time, on an attracting cycle
 
 bool is_in_large_component(PlainComplex c) {

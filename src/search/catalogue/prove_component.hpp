@@ -13,8 +13,8 @@ struct CatalogueEntry {
   bool appears_satellite = false;
 };
 
-/// Establishes the component with as many coefficients as leave about `rest` of its area out, and more precision where the
-/// bound falls short of what is expected. Nothing when the kernel does not follow.
+/// Establishes the component with as many coefficients as leave about `rest` of its area out, and more precision where
+/// the bound falls short of what is expected. Nothing when the kernel does not follow.
 std::optional<CatalogueEntry> prove_component(const ApproxComponent& component, double rest);
 
 }  // namespace merestone

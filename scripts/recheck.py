@@ -14,7 +14,9 @@ import sys
 
 sys.dont_write_bytecode = True
 
-from rechecker.files import Certificate  # noqa: E402
+from rechecker.area_files import AreaCertificate  # noqa: E402
+from rechecker.area_report import check_area  # noqa: E402
+from rechecker.files import open_certificate  # noqa: E402
 from rechecker.rules import ESTABLISHED, NOT_ESTABLISHED, OVER_LIMIT, establish  # noqa: E402
 from rechecker.strict_json import Fault  # noqa: E402
 from rechecker.words import claim_in_words  # noqa: E402
@@ -113,8 +115,10 @@ def drawn(claims, size):
 
 
 def check_stream(name, stream, options):
-    certificate, report = Certificate(stream), Report(name, options)
+    certificate, report = open_certificate(stream), Report(name, options)
     limits = Limits(options.max_work, options.max_bits)
+    if type(certificate) is AreaCertificate:
+        return check_area(name, certificate, limits, options.sample, options.json)
     claims, total = numbered_claims(certificate), 0
     if options.sample is not None:
         claims, total = drawn(claims, options.sample)
@@ -163,7 +167,7 @@ def parse_options(arguments):
     parser.add_argument("files", nargs="+", metavar="FILE", help="a certificate of either form; - is standard input")
     parser.add_argument("--json", action="store_true", help="one JSON object a line")
     parser.add_argument("--all", action="store_true", help=f"print every claim, also of files with more than {FEW}")
-    parser.add_argument("--sample", type=natural, metavar="N", help="check N claims of each file, drawn at random")
+    parser.add_argument("--sample", type=natural, metavar="N", help="check N claims of each file, or N blocks and N components, drawn at random")
     parser.add_argument("--max-work", type=natural, metavar="N", default=Limits().work,
                         help="most steps of orbits for one file, weighted by the precision (%(default)s)")
     parser.add_argument("--max-bits", type=natural, metavar="N", default=Limits().bits,

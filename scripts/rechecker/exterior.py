@@ -59,13 +59,12 @@ def _lambda_and_t_squared(z, tau, index):
             real((y_lo * k_lo * k_lo) >> 2 * p, shifted_up(y_hi * k_hi * k_hi, 2 * p), p))
 
 
-def exterior_disc(centre, index, places):
-    """A Round that lies outside M; raises TooWide, with the reason, if the orbit does not show one."""
-    above, below = FARTHEST_CENTRE
-    if centre.re.fraction() ** 2 + centre.im.fraction() ** 2 > Fraction(above, below) ** 2:
-        raise Refuted("|centre| <= 2.09375 does not hold")
-    c = _centre_ball(centre, places)
-    z, d, e = _jet(c, index)
+def disc_of_jet(centre, index, c, z, d, e):
+    """The Round about a Centre c0 that z_index and its derivatives show, all Balls of the same places. Raises TooWide.
+
+    Requires |c0| <= 2.1.
+    """
+    places = z.places
     if z.most() <= LEAST_MODULUS << places:
         raise Refuted(f"|z_{index}| is not above {LEAST_MODULUS} at the centre")
     if z.least() <= LEAST_MODULUS << places:
@@ -80,3 +79,12 @@ def exterior_disc(centre, index, places):
     f1 = lam.doubled() / a
     a2 = one(_FINAL_PLACES) - t_squared - lam * b / (a * a)
     return univalent_disc(centre, f1, -scale, a2)
+
+
+def exterior_disc(centre, index, places):
+    """A Round that lies outside M; raises TooWide, with the reason, if the orbit does not show one."""
+    above, below = FARTHEST_CENTRE
+    if centre.re.fraction() ** 2 + centre.im.fraction() ** 2 > Fraction(above, below) ** 2:
+        raise Refuted("|centre| <= 2.09375 does not hold")
+    c = _centre_ball(centre, places)
+    return disc_of_jet(centre, index, c, *_jet(c, index))

@@ -24,21 +24,21 @@ OF_RULE = {
 }
 
 
-def _number(value, at, read):
+def number_of(value, at, read):
     try:
         return read(text_of(value, at))
     except ValueError as error:
         raise fault_at(at, f"{shown(value)}: {error}") from None
 
 
-def _pair(value, at, read):
+def pair_of(value, at, read):
     if type(value) is not list or len(value) != 2:
         raise fault_at(at, "an array of two numbers should stand here")
-    return [_number(value[i], f"{at}/{i}", read) for i in range(2)]
+    return [number_of(value[i], f"{at}/{i}", read) for i in range(2)]
 
 
 def _ends(value, at, of_what):
-    lo, hi = _pair(value, at, read_dyadic)
+    lo, hi = pair_of(value, at, read_dyadic)
     if not lo.fraction() < hi.fraction():
         raise fault_at(at, f"the first end of {of_what} is less than the second")
     return lo, hi
@@ -46,8 +46,8 @@ def _ends(value, at, of_what):
 
 def _read_disc(value, at):
     check_keys(value, at, ("centre", "radius"))
-    disc = Disc(*_pair(value["centre"], at + "/centre", read_dyadic),
-                _number(value["radius"], at + "/radius", read_dyadic))
+    disc = Disc(*pair_of(value["centre"], at + "/centre", read_dyadic),
+                number_of(value["radius"], at + "/radius", read_dyadic))
     if disc.radius.mantissa <= 0:
         raise fault_at(at + "/radius", "the radius of a disc is positive")
     return disc
@@ -63,7 +63,7 @@ def _read_region(value, at):
     if len(value) != 1:
         raise fault_at(at, "a region has exactly one of the keys point, segment, disc, box")
     if "point" in value:
-        return Point(*_pair(value["point"], at + "/point", read_rational))
+        return Point(*pair_of(value["point"], at + "/point", read_rational))
     if "disc" in value:
         return _read_disc(value["disc"], at + "/disc")
     if "box" in value:
@@ -93,7 +93,7 @@ def _read_hint(key, value, at, rule):
     if key == "disc":
         return _read_disc(value, at)
     if key == "centre":
-        return Centre(*_pair(value, at, read_dyadic))
+        return Centre(*pair_of(value, at, read_dyadic))
     if key == "witnesses":
         return _read_witnesses(value, at)
     longest = {"closed-form": 2, "preperiodic": LONGEST_PREPERIODIC}.get(rule)
@@ -122,7 +122,7 @@ def _read_by(value, at, statement, depth=0):
 
 
 def _read_bailout(value, at):
-    bailout = _number(value, at, read_dyadic)
+    bailout = number_of(value, at, read_dyadic)
     if not 2 <= bailout.fraction() <= 2**60:
         raise fault_at(at, "a bailout is from 2 to 2^60")
     return bailout

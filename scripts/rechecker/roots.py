@@ -62,17 +62,25 @@ def proper_divisors_to_exclude(period):
     return sorted(period // prime for prime in prime_divisors(period))
 
 
-def isolates_nucleus(disc, period, places):
-    """(True or None, the inequality): exactly one nucleus of that exact period lies in the disc. Raises TooWide."""
+def isolate_nucleus(disc, period, places):
+    """(True or None, the inequality, κ): exactly one nucleus of that exact period lies in the disc. Raises TooWide.
+
+    κ: a lower bound, in units, of the modulus of the derivative of z_period in Lemma P2's sense.
+    """
     orbit = _RegionOrbit(disc, places)
     for k in proper_divisors_to_exclude(period):
         orbit.advance(k)
         if orbit.range().least() == 0:
-            return None, f"z_{k} != 0 over the region (else the period may be shorter)"
+            return None, f"z_{k} != 0 over the region (else the period may be shorter)", 0
     orbit.advance(period)
     holds = _has_one_zero(orbit.at_centre(), orbit.derivative, disc.radius, places)
     return holds or None, (f"|z_{period}| at the centre is less than the radius times the least modulus of its "
-                           "derivative")
+                           "derivative"), orbit.derivative.least()
+
+
+def isolates_nucleus(disc, period, places):
+    """The first two of these."""
+    return isolate_nucleus(disc, period, places)[:2]
 
 
 def isolates_misiurewicz(disc, preperiod, period, places):

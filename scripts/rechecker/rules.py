@@ -60,7 +60,7 @@ def _escape(claim, places):
     return orbit.is_beyond(bailout), f"|z_{index}| > {'bailout' if claim.statement == 'count' else 2}", figures
 
 
-def _attracting_disc(claim, places):
+def attracting_disc(claim, places):
     by = claim.by
     orbit = Orbit(claim.region, places, by.disc)
     for k in proper_divisors_to_exclude(by.period):
@@ -82,7 +82,7 @@ def _exterior_disc(claim, places):
 
 def _interior_disc(claim, places):
     centre = Point(claim.by.centre.re.fraction(), claim.by.centre.im.fraction())
-    verdict, inequality, _ = _attracting_disc(claim._replace(region=centre), places)
+    verdict, inequality, _ = attracting_disc(claim._replace(region=centre), places)
     if not verdict:
         return verdict, inequality, {}
     return _lies_in(claim, interior_disc(claim.by, places), "interior disc")
@@ -116,7 +116,7 @@ def _with_precision(claim, limits, attempt):
 
 _BY_PRECISION = {
     "escape": (_escape, ("E1", "E2")),
-    "attracting-disc": (_attracting_disc, ("I1", "E2")),
+    "attracting-disc": (attracting_disc, ("I1", "E2")),
     "exterior-disc": (_exterior_disc, ("E3", "U1")),
     "interior-disc": (_interior_disc, ("I2", "U1", "I1")),
     "isolated-root": (_isolated_root, ("P2", "E2")),

@@ -31,7 +31,7 @@ std::string in_words(const AreaResult& result, const AreaWords& words) {
   const AreaHeader& header = result.header;
   const bool is_whole = !header.cover->within;
   std::string text = fmt::format("the area of M{} is in {}\n",
-                                 is_whole ? "" : fmt::format(" in the box {} {}", packed(words.within->first), packed(words.within->second)),
+                                 is_whole ? "" : fmt::format(" in the box {} {}", packed(words.within.first), packed(words.within.second)),
                                  interval_literal(header.at_least, header.at_most, kDigits));
   text += is_whole ? fmt::format("  at least: {} components on or above the real axis, each with a proved nucleus\n",
                                  result.components.size())
@@ -51,7 +51,7 @@ Json as_json(const AreaResult& result, const std::optional<WrittenArea>& written
             {"depth", {result.least_depth, result.largest_depth}},
             {"components", result.components.size()},
             {"resumed_blocks", result.resumed_blocks}};
-  if (header.cover->within) json["within"] = {packed(words.within->first), packed(words.within->second)};
+  if (header.cover->within) json["within"] = {packed(words.within.first), packed(words.within.second)};
   if (written) json["certificate"] = {{"file", words.out}, {"bytes", written->bytes}, {"digest", hexadecimal(written->digest)}};
   return json;
 }

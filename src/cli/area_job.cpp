@@ -43,6 +43,8 @@ class Job {
     const Result<AreaCover> cover = cover_of(job_.request);
     if (!cover) return cover.failure();
     std::error_code ignored;
+    if (std::filesystem::exists(job_.out, ignored) && !std::filesystem::is_regular_file(job_.out, ignored))
+      return Failure{job_.out + ": is not a regular file; name a file to write"};  // said before hours of work, not after
     const bool is_there = std::filesystem::exists(journal_path(), ignored);
     if (is_there && !job_.resume)
       return Failure{journal_path() + ": an earlier run left this journal; --resume goes on with it, or remove it to begin anew"};

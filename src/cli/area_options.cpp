@@ -71,7 +71,8 @@ void add_effort(CLI::App& command, AreaWords& words) {
 CLI::App* add_area_command(CLI::App& program, AreaWords& words) {
   CLI::App* command = program.add_subcommand("area", "Prove that the area of M, or of its part in a box, lies between two numbers");
   command->add_option("--within", words.within, "Only what M has in the box between two opposite corners")
-      ->type_name("CORNER CORNER");
+      ->type_name("CORNER CORNER")
+      ->check(CLI::Validator([](std::string& corner) { return corner.empty() ? std::string("a corner is empty") : std::string(); }, ""));
   add_effort(*command, words);
   CLI::Option* out = command->add_option("--out", words.out, "Write a certificate, NAME.mere; NAME.mere.journal grows meanwhile")
                          ->type_name("FILE");
@@ -107,8 +108,8 @@ std::optional<Failure> check_container_name(const std::string& path) {
 
 Result<AreaRequest> read_area_words(const AreaWords& words) {
   AreaRequest request;
-  if (words.within) {
-    const Result<RationalBox> box = read_box("area", *words.within);
+  if (!words.within.first.empty()) {
+    const Result<RationalBox> box = read_box("area", words.within);
     if (!box) return box.failure();
     if (words.resolution) return Failure{"area: --resolution is for all of M; with --within cells inside bound the area from below"};
     request.within = *box;
@@ -121,7 +122,7 @@ Result<AreaRequest> read_area_words(const AreaWords& words) {
   if (!request.within) request.resolution = words.resolution.value_or(resolution_for_depth(request.depth));
   if (words.rules == "elementary") request.rules = CoverRules::elementary;
   if (const Result<AreaCover> cover = cover_of(request); !cover) {
-    const auto& [corner, opposite] = *words.within;  // all of M can be cut to any depth
+    const auto& [corner, opposite] = words.within;  // all of M can be cut to any depth
     return Failure{fmt::format("area: --within {} {}: {}", packed(corner), packed(opposite), cover.failure().message)};
   }
   return request;

@@ -11,7 +11,7 @@ namespace merestone {
 
 /// The words of `merestone area`, as typed.
 struct AreaWords {
-  std::optional<std::pair<std::string, std::string>> within;  // two corners
+  std::pair<std::string, std::string> within;  // two corners
   std::optional<unsigned> depth;
   std::optional<double> seconds;
   std::optional<int> resolution;

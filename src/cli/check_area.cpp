@@ -239,6 +239,8 @@ void AreaCheck::conclude() {
   if (sum_)
     if (auto failure = sum_->finish()) fail("cover", *failure);
   if (auto failure = check_distinct(components_)) fail("components", *failure);
+  if (claimed.cover && claimed.cover->within && !components_.empty())
+    fail("components", {"they bound the area of all of M from below, and the claim is about a box"});
   if (verdict_.failed > 0) return;
   verdict_.components = components_.size();
   if (sum_) verdict_.at_most = sum_->at_most();

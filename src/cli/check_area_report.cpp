@@ -76,7 +76,7 @@ std::string in_words(const std::string& path, const AreaVerdict& verdict, std::u
                                  interval(verdict.claimed.at_least, verdict.claimed.at_most));
   for (const std::string& failure : verdict.failures) text += "  " + failure + "\n";
   if (verdict.over_limit) text += "  " + *verdict.over_limit + "\n";
-  if (verdict.absent > 0) text += fmt::format("  absent, not established: block {}\n", absent_in_words(verdict));
+  if (verdict.absent > 0) text += fmt::format("  absent, not established: block{} {}\n", verdict.absent == 1 ? "" : "s", absent_in_words(verdict));
   if (!verdict.fault && verdict.failed == 0 && !verdict.over_limit) {
     text += fmt::format("  computed here{}: {}\n", verdict.absent > 0 ? ", from what absent blocks claim too" : "",
                         interval(verdict.at_least, verdict.at_most));

@@ -28,6 +28,8 @@ constexpr const char* kFooter = R"(Start with:
   merestone decide -0.75+0.1i           a verdict, with its proof in a line
   merestone decide --box A B            a verdict about every parameter of a box
   merestone locate --disc C R           what the disc contains, with proved decimals
+  merestone area                        two numbers between which the area of M lies
+  merestone components                  the largest hyperbolic components, with proved nuclei
   merestone components --max-period 6   hyperbolic components with their areas
   merestone decide --help               parameters, regions, lists, limits, certificates
   merestone-check FILE                  what a colleague runs on a certificate

@@ -124,7 +124,7 @@ DepthPolicy AreaRun::policy_for(const std::vector<BlockPlace>& left) const {
   const AreaCover& cover = *result_.header.cover;
   const double trial = seconds_of_block(cover, left, request_.depth - kShallower, request_.with_inside());
   const double spent = std::chrono::duration<double>(Clock::now() - start_).count();
-  return DepthPolicy::timed(request_.depth - kShallower, trial, *request_.seconds - spent, options_.threads);
+  return DepthPolicy::timed(request_.depth - kShallower, block_depths(cover), trial, *request_.seconds - spent, options_.threads);
 }
 
 std::optional<Failure> AreaRun::take(const FinishedBlock& finished, AreaTally& tally) {

@@ -22,7 +22,7 @@ double below(const Rational& number, long exponent) {
   const Rational steps = number / step;
   Integer whole;
   fmpz_fdiv_q(whole, steps.numerator(), steps.denominator());
-  return arf_get_d(Dyadic::scaled(whole, exponent).raw(), ARF_RND_DOWN);
+  return arf_get_d(Dyadic::scaled(whole, exponent).raw(), ARF_RND_FLOOR);
 }
 
 // The least e with 2^e >= the number, which is positive.
@@ -55,6 +55,11 @@ Result<AreaCover> cover_of_box(const RationalBox& box, CoverRules rules, unsigne
   if (side - static_cast<std::int32_t>(depth + kCut) < kFinestCell)
     return Failure{"the box is too small to be cut so deep in double precision"};
   return AreaCover{{{x, y, side, trunk_grade(depth)}, rules}, false, box};
+}
+
+DepthRange block_depths(const AreaCover& cover) {
+  const unsigned trunk = cover.plan.root.grade;
+  return {trunk, std::min(kLargestDepth, trunk + Canvas::kLargestGrade - kCut)};
 }
 
 CoverEffort block_effort(const AreaCover& cover, unsigned depth, bool with_inside) {

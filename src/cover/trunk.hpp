@@ -3,6 +3,7 @@
 #include <vector>
 
 #include "cover/cover_effort.hpp"
+#include "cover/depth_policy.hpp"
 #include "format/area_header.hpp"
 #include "kernel/cell_area.hpp"
 
@@ -32,6 +33,9 @@ inline constexpr unsigned kLargestDepth = 22;
 inline constexpr unsigned kSmallestDepth = 4;
 /// A fine cell is a cell of the last depth halved so many times more.
 inline constexpr unsigned kCut = 4;
+
+/// The depths that blocks of the cover may have.
+DepthRange block_depths(const AreaCover& cover);
 
 /// What the search on a block is to try so that its cells have this depth below the root.
 CoverEffort block_effort(const AreaCover& cover, unsigned depth, bool with_inside);

@@ -55,7 +55,10 @@ std::optional<Failure> CoverSum::add(const CoverBlock& block, std::uint64_t outs
   if (decided_[at_place]) return std::nullopt;  // discs here may be a little larger than where the cover was made
   const CoverSquare at = square(block);
   const std::int32_t cell = at.side_exponent - static_cast<std::int32_t>(at.grade);
-  kept_.add(window(at).touching.cells() - outside_cells, cell);
+  const CoverWindow part = window(at);
+  if (outside_cells > part.touching.cells() || inside_cells > part.within.cells())
+    return Failure{place_in_words(block.column, block.row) + ": of its block more cells are claimed outside or inside than count there"};
+  kept_.add(part.touching.cells() - outside_cells, cell);
   inside_.add(inside_cells, cell);
   return std::nullopt;
 }

@@ -22,7 +22,8 @@ class CoverSum {
   CoverWindow window(const CoverSquare& square) const { return within_ ? window_of(square, *within_) : whole_window(square); }
 
   /// A block with these cells, which is established, or whose figures are taken as they are claimed.
-  /// Nothing is added where the trunk decides already. On failure: its place is none of the trunk's, or has a block already.
+  /// Nothing is added where the trunk decides already. On failure: its place is none of the trunk's, or has a block already, or
+  /// these are more cells than its window has.
   std::optional<Failure> add(const CoverBlock& block, std::uint64_t outside_cells, std::uint64_t inside_cells);
   /// On failure: a fine cell of the trunk that is not decided and has no block.
   std::optional<Failure> finish() const;

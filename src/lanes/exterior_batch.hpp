@@ -18,7 +18,7 @@ struct ExteriorMark {
   enum class End : std::uint8_t {
     proved,   // `circle` is a closed disc outside M
     left,     // it escaped, and nothing was proved
-    close,    // given up: a disc would be smaller than was asked for
+    close,    // given up: a disc would probably be smaller than was asked for
     stayed,   // not escaped within the steps; the circle's centre is the last z, approximately
   };
   DoubleCircle circle;
@@ -28,7 +28,8 @@ struct ExteriorMark {
 /// How far orbits are followed.
 struct OrbitLimits {
   std::uint32_t steps = 1000;
-  double smallest = 0;  // radius of a disc that is worth having: an orbit is given up when its own will clearly be smaller
+  double smallest = 0;  // radius of a disc that is worth having: an orbit is given up when its own will probably be smaller
+                        // (up to five times as large, measured)
 };
 
 /// Lemmas E3, E9 for many parameters at once, in the vector lanes of this machine: `marks[i]` is what is shown at

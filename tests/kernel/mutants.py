@@ -23,13 +23,14 @@ from pathlib import Path
 
 import mutants_area
 import mutants_cover
+import mutants_cover_lanes
 import mutants_discs
 import mutants_lanes
 import mutants_regions
 import mutants_rules
 import mutants_safe_discs
 
-ROOMS = ["kernel", "lanes", "search"]
+ROOMS = ["kernel", "lanes", "search", "cover"]
 LONGEST_RUN = 1800  # seconds; the tests of a room take less than one minute
 
 
@@ -54,7 +55,7 @@ class Mutant:
 
 def all_mutants():
     for module in (mutants_discs, mutants_rules, mutants_regions, mutants_safe_discs, mutants_cover, mutants_lanes,
-                   mutants_area):
+                   mutants_area, mutants_cover_lanes):
         for file, mutants in module.MUTANTS.items():
             for what, *texts in mutants:
                 yield Mutant(file, what, list(zip(texts[::2], texts[1::2], strict=True)))

@@ -9,8 +9,8 @@ from rechecker.exact import Dyadic
 from rechecker.power_series import Series, inverse_coefficients
 from rechecker.roots import isolate_nucleus
 
-LEAST_RADIUS = -1000  # exponents
-LARGEST_RADIUS = 0
+# The entries that are taken at all; the format sets no such limits.
+MOST_PERIOD, MOST_COEFFICIENTS, MOST_TERMS, BITS, RADII = 20_000, 512, 1 << 20, (53, 4096), (-1000, 0)
 DOUBLINGS = 3
 _GUARD = 64
 _LOST = 90  # bits of the area's relative error that are asked for
@@ -106,10 +106,18 @@ def _attempt(component, budget):
     return area
 
 
+def _require_range(component):
+    if component.period > MOST_PERIOD or not 1 <= component.coefficients <= MOST_COEFFICIENTS:
+        raise NotShown(f"the period is above {MOST_PERIOD}, or the coefficients are not 1 to {MOST_COEFFICIENTS}")
+    if component.period * component.coefficients > MOST_TERMS:
+        raise NotShown("period times coefficients is above 2^20")
+    if not BITS[0] <= component.bits <= BITS[1] or not RADII[0] <= component.radius_exponent <= RADII[1]:
+        raise NotShown("the precision is not 53 to 4096 bits, or the radius not 2^-1000 to 1")
+
+
 def component_area(component, budget):
     """A lower bound of what the component adds to the area of M, its mirror image included. Raises NotShown."""
-    if not LEAST_RADIUS <= component.radius_exponent <= LARGEST_RADIUS:
-        raise NotShown("the radius is not from 2^-1000 to 1")
+    _require_range(component)
     im, radius = component.im.fraction(), Fraction(2) ** component.radius_exponent
     if im != 0 and not im > radius:
         raise NotShown("the centre is neither real nor above the real axis by more than the radius")

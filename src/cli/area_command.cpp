@@ -30,15 +30,17 @@ std::string depth_in_words(const AreaResult& result) {
 std::string in_words(const AreaResult& result, const AreaWords& words) {
   const AreaHeader& header = result.header;
   const bool is_whole = !header.cover->within;
-  std::string text = fmt::format("the area of M{} is in {}\n",
-                                 is_whole ? "" : fmt::format(" in the box {} {}", packed(words.within.first), packed(words.within.second)),
-                                 interval_literal(header.at_least, header.at_most, kDigits));
+  std::string text = fmt::format(
+      "the area of M{} is in {}\n",
+      is_whole ? "" : fmt::format(" in the box {} {}", packed(words.within.first), packed(words.within.second)),
+      interval_literal(header.at_least, header.at_most, kDigits));
   text += is_whole ? fmt::format("  at least: {} components on or above the real axis, each with a proved nucleus\n",
                                  result.components.size())
                    : std::string("  at least: cells that are proved inside\n");
   text += fmt::format("  at most: what discs outside M leave of {} blocks, cut to {}\n", result.trunk.places.size(),
                       depth_in_words(result));
-  if (result.resumed_blocks > 0) text += fmt::format("  {} of the blocks are from the journal\n", result.resumed_blocks);
+  if (result.resumed_blocks > 0)
+    text += fmt::format("  {} of the blocks are from the journal\n", result.resumed_blocks);
   return text;
 }
 
@@ -52,7 +54,8 @@ Json as_json(const AreaResult& result, const std::optional<WrittenArea>& written
             {"components", result.components.size()},
             {"resumed_blocks", result.resumed_blocks}};
   if (header.cover->within) json["within"] = {packed(words.within.first), packed(words.within.second)};
-  if (written) json["certificate"] = {{"file", words.out}, {"bytes", written->bytes}, {"digest", hexadecimal(written->digest)}};
+  if (written)
+    json["certificate"] = {{"file", words.out}, {"bytes", written->bytes}, {"digest", hexadecimal(written->digest)}};
   return json;
 }
 
@@ -60,8 +63,9 @@ Json as_json(const AreaResult& result, const std::optional<WrittenArea>& written
 std::optional<int> draw(const AreaWords& words, const AreaRequest& request) {
   const Result<Picture> picture = draw_area(request.within, request.rules, words.pixels);
   if (!picture) return refuse(ExitCode::malformed, picture.failure());
-  const std::string png = png_of(*picture, {{"Software", "merestone"},
-                                            {"Comment", "sky blue: proved outside M; black: proved inside; orange: undecided"}});
+  const std::string png = png_of(
+      *picture,
+      {{"Software", "merestone"}, {"Comment", "sky blue: proved outside M; black: proved inside; orange: undecided"}});
   Result<AtomicFile> file = AtomicFile::create(words.picture);
   if (!file) return refuse(ExitCode::io_failed, file.failure());
   if (auto problem = file.value().write(png)) return refuse(ExitCode::io_failed, *problem);
@@ -75,7 +79,8 @@ int run_area_command(const AreaWords& words, const std::string& command_line) {
   const Result<AreaRequest> request = read_area_words(words);
   if (!request) return refuse(ExitCode::malformed, request.failure());
   if (!words.lanes.empty() && !use_lane_target(words.lanes))
-    return refuse(ExitCode::malformed, {fmt::format("--lanes {}: this machine has {}", words.lanes, fmt::join(lane_targets(), ", "))});
+    return refuse(ExitCode::malformed,
+                  {fmt::format("--lanes {}: this machine has {}", words.lanes, fmt::join(lane_targets(), ", "))});
   if (!words.picture.empty())
     if (const auto code = draw(words, *request)) return *code;
   const AreaOutcome outcome =

@@ -44,20 +44,25 @@ class Job {
     if (!cover) return cover.failure();
     std::error_code ignored;
     if (std::filesystem::exists(job_.out, ignored) && !std::filesystem::is_regular_file(job_.out, ignored))
-      return Failure{job_.out + ": is not a regular file; name a file to write"};  // said before hours of work, not after
+      return Failure{job_.out +
+                     ": is not a regular file; name a file to write"};  // said before hours of work, not after
     const bool is_there = std::filesystem::exists(journal_path(), ignored);
     if (is_there && !job_.resume)
-      return Failure{journal_path() + ": an earlier run left this journal; --resume goes on with it, or remove it to begin anew"};
-    if (!is_there && job_.resume) return Failure{journal_path() + ": there is no journal to go on with; begin without --resume"};
+      return Failure{journal_path() +
+                     ": an earlier run left this journal; --resume goes on with it, or remove it to begin anew"};
+    if (!is_there && job_.resume)
+      return Failure{journal_path() + ": there is no journal to go on with; begin without --resume"};
     const std::string work = description_of(job_.request, *cover);
-    Result<Journal> journal = job_.resume ? Journal::resume(journal_path(), work) : Journal::create(journal_path(), work);
+    Result<Journal> journal =
+        job_.resume ? Journal::resume(journal_path(), work) : Journal::create(journal_path(), work);
     if (!journal) return journal.failure();
     store_.emplace(std::move(journal.value()));
     return std::nullopt;
   }
 
   std::optional<Failure> finish(AreaOutcome& outcome) {
-    const Result<WrittenArea> written = assemble_area(*outcome.result, *store_, job_.out, job_.outline, job_.provenance);
+    const Result<WrittenArea> written =
+        assemble_area(*outcome.result, *store_, job_.out, job_.outline, job_.provenance);
     if (!written) return written.failure();
     outcome.written = *written;
     return store_->remove();
@@ -68,14 +73,16 @@ class Job {
       (void)store_->sync();
       fmt::print(stderr, "merestone: what was finished is in {}; --resume goes on with it\n", journal_path());
     }
-    return {std::nullopt, std::nullopt, refuse(store_ || !job_.out.empty() ? ExitCode::io_failed : ExitCode::malformed, failure)};
+    return {std::nullopt, std::nullopt,
+            refuse(store_ || !job_.out.empty() ? ExitCode::io_failed : ExitCode::malformed, failure)};
   }
 
   AreaOutcome interrupted() {
     if (store_) (void)store_->sync();
     fmt::print(stderr, "merestone: interrupted; {}\n",
-               store_ ? "what was finished is in " + journal_path() + "; --resume goes on with it"
-                      : "nothing was kept; with --out the blocks that are finished are, and --resume goes on with them");
+               store_
+                   ? "what was finished is in " + journal_path() + "; --resume goes on with it"
+                   : "nothing was kept; with --out the blocks that are finished are, and --resume goes on with them");
     return {std::nullopt, std::nullopt, 128 + Interruption::signal()};
   }
 
@@ -88,13 +95,14 @@ class Job {
     const std::lock_guard guard(mutex_);
     const AreaProgress& now = latest_;
     if (now.phase == AreaProgress::Phase::components)
-      return fmt::format("components: {} found, {} proved ({:.0f} s)", now.catalogue.candidates, now.catalogue.proved, seconds);
+      return fmt::format("components: {} found, {} proved ({:.0f} s)", now.catalogue.candidates, now.catalogue.proved,
+                         seconds);
     if (now.blocks == 0) return fmt::format("cutting ({:.0f} s)", seconds);
     if (first_blocks_ == 0) first_blocks_ = now.blocks, first_seconds_ = seconds;
     const double rate = static_cast<double>(now.blocks - first_blocks_) / std::max(seconds - first_seconds_, 0.5);
     const double left = rate > 0 ? static_cast<double>(now.all_blocks - now.blocks) / rate : 0;
-    return fmt::format("[{:.5f}, {:.5f}]  {} of {} blocks, {:.0f} a second ({:.0f} s, about {:.0f} s left)", now.at_least,
-                       now.at_most, now.blocks, now.all_blocks, rate, seconds, left);
+    return fmt::format("[{:.5f}, {:.5f}]  {} of {} blocks, {:.0f} a second ({:.0f} s, about {:.0f} s left)",
+                       now.at_least, now.at_most, now.blocks, now.all_blocks, rate, seconds, left);
   }
 
   const AreaJob& job_;

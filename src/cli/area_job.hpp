@@ -24,8 +24,8 @@ struct AreaOutcome {
   int code = 0;  // of the program
 };
 
-/// Runs the job with progress on the terminal, keeping finished blocks in a journal beside the certificate. Failures and
-/// interruptions are said on standard error.
+/// Runs the job with progress on the terminal, keeping finished blocks in a journal beside the certificate. Failures
+/// and interruptions are said on standard error.
 AreaOutcome run_area_job(const AreaJob& job);
 
 }  // namespace merestone

@@ -44,7 +44,8 @@ Exit codes:
 
 void add_effort(CLI::App& command, AreaWords& words) {
   CLI::Option* depth =
-      command.add_option("--depth", words.depth, "Halve cells so often; the result is the same wherever it is computed")
+      command
+          .add_option("--depth", words.depth, "Halve cells so often; the result is the same wherever it is computed")
           ->type_name("N")
           ->check(CLI::Range(kSmallestDepth, kLargestDepth));
   command.add_option("--seconds", words.seconds, "Go as deep as the time allows; 60 unless --depth is given")
@@ -69,18 +70,22 @@ void add_effort(CLI::App& command, AreaWords& words) {
 }  // namespace
 
 CLI::App* add_area_command(CLI::App& program, AreaWords& words) {
-  CLI::App* command = program.add_subcommand("area", "Prove that the area of M, or of its part in a box, lies between two numbers");
+  CLI::App* command =
+      program.add_subcommand("area", "Prove that the area of M, or of its part in a box, lies between two numbers");
   command->add_option("--within", words.within, "Only what M has in the box between two opposite corners")
       ->type_name("CORNER CORNER")
-      ->check(CLI::Validator([](std::string& corner) { return corner.empty() ? std::string("a corner is empty") : std::string(); }, ""));
+      ->check(CLI::Validator(
+          [](std::string& corner) { return corner.empty() ? std::string("a corner is empty") : std::string(); }, ""));
   add_effort(*command, words);
-  CLI::Option* out = command->add_option("--out", words.out, "Write a certificate, NAME.mere; NAME.mere.journal grows meanwhile")
-                         ->type_name("FILE");
+  CLI::Option* out =
+      command->add_option("--out", words.out, "Write a certificate, NAME.mere; NAME.mere.journal grows meanwhile")
+          ->type_name("FILE");
   command->add_flag("--resume", words.resume, "Go on with the journal of an earlier run of the same words")->needs(out);
-  command->add_flag("--outline", words.outline, "Write the blocks by their digests alone: a small file, to be regenerated")
+  command
+      ->add_flag("--outline", words.outline, "Write the blocks by their digests alone: a small file, to be regenerated")
       ->needs(out);
-  CLI::Option* picture = command->add_option("--picture", words.picture, "Also draw what is proved, as a PNG picture")
-                             ->type_name("FILE");
+  CLI::Option* picture =
+      command->add_option("--picture", words.picture, "Also draw what is proved, as a PNG picture")->type_name("FILE");
   command->add_option("--pixels", words.pixels, "Width of the picture")
       ->type_name("N")
       ->check(CLI::Range(64U, 16384U))
@@ -111,7 +116,8 @@ Result<AreaRequest> read_area_words(const AreaWords& words) {
   if (!words.within.first.empty()) {
     const Result<RationalBox> box = read_box("area", words.within);
     if (!box) return box.failure();
-    if (words.resolution) return Failure{"area: --resolution is for all of M; with --within cells inside bound the area from below"};
+    if (words.resolution)
+      return Failure{"area: --resolution is for all of M; with --within cells inside bound the area from below"};
     request.within = *box;
   }
   if (!words.out.empty())

@@ -20,10 +20,10 @@ namespace {
 namespace tbb = oneapi::tbb;
 
 constexpr std::size_t kMostFailuresKept = 20, kMostRunsKept = 1000;
-constexpr std::uint64_t kSampledBlocks = 64;         // the first blocks have one mark each established in balls too, ...
-constexpr std::uint64_t kOneBlockIn = 16;            // ... and of the others one in so many
-constexpr std::uint64_t kUnitsOfFile = 100;          // the file's limit on work, in those of a claim
-constexpr std::uint64_t kStepsOfUnit = 64;           // steps in lanes of double precision that cost a unit of work
+constexpr std::uint64_t kSampledBlocks = 64;  // the first blocks have one mark each established in balls too, ...
+constexpr std::uint64_t kOneBlockIn = 16;     // ... and of the others one in so many
+constexpr std::uint64_t kUnitsOfFile = 100;   // the file's limit on work, in those of a claim
+constexpr std::uint64_t kStepsOfUnit = 64;    // steps in lanes of double precision that cost a unit of work
 
 // A block on its way.
 struct Part {
@@ -104,8 +104,10 @@ PartPointer AreaCheck::open(PartPointer part) const {
   if (!part->stored) return part;
   Read<AreaBlock> block = open_area_block(*part->stored);
   part->stored.reset();
-  if (const ReadFault* fault = fault_of(block)) part->fault = *fault;
-  else part->block = std::move(std::get<AreaBlock>(block));
+  if (const ReadFault* fault = fault_of(block))
+    part->fault = *fault;
+  else
+    part->block = std::move(std::get<AreaBlock>(block));
   return part;
 }
 
@@ -146,7 +148,8 @@ std::optional<Failure> AreaCheck::admit_work(const AreaBlock& block) {
   if (block.kind == AreaKind::components)
     for (const Component& component : block.components()) work += work_of(component);
   else
-    work = work_of(block.cover(), reader_.header().cover->plan.rules, mode_of(block)) / (options_.exact ? 1 : kStepsOfUnit);
+    work = work_of(block.cover(), reader_.header().cover->plan.rules, mode_of(block)) /
+           (options_.exact ? 1 : kStepsOfUnit);
   work_ += work;
   if (work > options_.limits.work || work_ / kUnitsOfFile > options_.limits.work)
     return Failure{"would go over the limit on work; raise --max-work"};
@@ -157,7 +160,8 @@ std::optional<Failure> AreaCheck::establish_trunk(const AreaBlock& block) {
   const AreaCover& cover = *reader_.header().cover;
   if (auto failure = check_reach(cover.plan.root, cover.mirrored, cover.within)) return failure;
   const CoverWindow window = cover.within ? window_of(cover.plan.root, *cover.within) : whole_window(cover.plan.root);
-  const Result<CoverProof> proof = establish_cover_block(cover.plan.root, cover.plan.rules, window, block.cover(), mode_of(block));
+  const Result<CoverProof> proof =
+      establish_cover_block(cover.plan.root, cover.plan.rules, window, block.cover(), mode_of(block));
   if (!proof) return proof.failure();
   sum_.emplace(cover.plan, cover.mirrored, cover.within, *proof);
   verdict_.outside_marks += proof->figures.outside_marks, verdict_.inside_marks += proof->figures.inside_marks;
@@ -168,10 +172,12 @@ std::optional<Failure> AreaCheck::establish_trunk(const AreaBlock& block) {
 void AreaCheck::establish_cover(Part& part) const {
   const CoverBlock& block = part.block->cover();
   const CoverSquare square = sum_->square(block);
-  const Result<CoverProof> proof = establish_cover_block(square, reader_.header().cover->plan.rules, sum_->window(square), block,
-                                                         mode_of(*part.block));
-  if (proof) part.figures = proof->figures;
-  else part.failure = proof.failure();
+  const Result<CoverProof> proof = establish_cover_block(square, reader_.header().cover->plan.rules,
+                                                         sum_->window(square), block, mode_of(*part.block));
+  if (proof)
+    part.figures = proof->figures;
+  else
+    part.failure = proof.failure();
 }
 
 void AreaCheck::establish_components(Part& part) const {
@@ -180,8 +186,10 @@ void AreaCheck::establish_components(Part& part) const {
   std::vector<std::optional<Failure>> failures(list.size());
   tbb::parallel_for(std::size_t{0}, list.size(), [&](std::size_t i) {
     const Result<ComponentArea> area = establish_component(list[i]);
-    if (area) part.areas[i] = counted_area(list[i], area->lower);
-    else failures[i] = area.failure();
+    if (area)
+      part.areas[i] = counted_area(list[i], area->lower);
+    else
+      failures[i] = area.failure();
   });
   for (std::size_t i = 0; i < list.size() && !part.failure; ++i)
     if (failures[i]) part.failure = Failure{"component " + std::to_string(i) + ": " + failures[i]->message};
@@ -197,12 +205,15 @@ PartPointer AreaCheck::establish(PartPointer part) const {
 void AreaCheck::take_absent(const AbsentCover& absent) {
   ++verdict_.absent;
   auto& runs = verdict_.absent_runs;
-  if (!runs.empty() && runs.back().second + 1 == absent.ordinal) runs.back().second = absent.ordinal;
-  else if (runs.size() < kMostRunsKept) runs.emplace_back(absent.ordinal, absent.ordinal);
+  if (!runs.empty() && runs.back().second + 1 == absent.ordinal)
+    runs.back().second = absent.ordinal;
+  else if (runs.size() < kMostRunsKept)
+    runs.emplace_back(absent.ordinal, absent.ordinal);
   CoverBlock block;
   block.column = absent.column, block.row = absent.row, block.grade = absent.grade;
   if (!sum_) return;
-  if (auto failure = sum_->add(block, absent.outside_cells, absent.inside_cells)) fail(block_name(absent.ordinal), *failure);
+  if (auto failure = sum_->add(block, absent.outside_cells, absent.inside_cells))
+    fail(block_name(absent.ordinal), *failure);
 }
 
 void AreaCheck::add(const Part& part) {
@@ -223,8 +234,10 @@ void AreaCheck::deliver(const PartPointer& part) {
   if (part == nullptr) return;
   ++verdict_.blocks;
   if (part->absent) take_absent(*part->absent);
-  if (part->failure) fail(block_name(part->block->ordinal), *part->failure);
-  else if (part->block && !stopped_) add(*part);
+  if (part->failure)
+    fail(block_name(part->block->ordinal), *part->failure);
+  else if (part->block && !stopped_)
+    add(*part);
   if (options_.report) options_.report(verdict_.blocks);
 }
 
@@ -245,8 +258,10 @@ void AreaCheck::conclude() {
   verdict_.components = components_.size();
   if (sum_) verdict_.at_most = sum_->at_most();
   if (claimed.at_least) verdict_.at_least = sum_ ? std::max(sum_->inside(), component_area_) : component_area_;
-  if (claimed.at_most && *verdict_.at_most > *claimed.at_most) fail("at-most", {"the blocks prove a larger bound only"});
-  if (claimed.at_least && *verdict_.at_least < *claimed.at_least) fail("at-least", {"the blocks prove a smaller bound only"});
+  if (claimed.at_most && *verdict_.at_most > *claimed.at_most)
+    fail("at-most", {"the blocks prove a larger bound only"});
+  if (claimed.at_least && *verdict_.at_least < *claimed.at_least)
+    fail("at-least", {"the blocks prove a smaller bound only"});
 }
 
 AreaVerdict AreaCheck::run() {

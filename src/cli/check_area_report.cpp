@@ -31,8 +31,8 @@ ExitCode exit_code_of(const AreaVerdict& verdict) {
 std::string place_in_words(const AreaHeader& header, const Notation& n = Notation(StatementForm::text)) {
   if (!header.cover || !header.cover->within) return n.formula("M");
   const RationalBox& box = *header.cover->within;
-  const std::string sides = fmt::format("[{}, {}] {} [{}, {}]", spell(box.lo.re), spell(box.hi.re), n.pick("x", "\\times"),
-                                        spell(box.lo.im), spell(box.hi.im));
+  const std::string sides = fmt::format("[{}, {}] {} [{}, {}]", spell(box.lo.re), spell(box.hi.re),
+                                        n.pick("x", "\\times"), spell(box.lo.im), spell(box.hi.im));
   return n.formula("M") + " in the box " + n.formula(sides);
 }
 
@@ -45,7 +45,8 @@ std::string verdict_in_words(const AreaVerdict& verdict) {
   if (verdict.failed > 0) return "NOT ESTABLISHED";
   if (verdict.over_limit) return "REFUSED over the limit";
   if (verdict.absent > 0)
-    return fmt::format("established in part: {} of {} blocks are absent", grouped(verdict.absent), grouped(verdict.blocks));
+    return fmt::format("established in part: {} of {} blocks are absent", grouped(verdict.absent),
+                       grouped(verdict.blocks));
   return "established";
 }
 
@@ -55,7 +56,8 @@ std::string absent_in_words(const AreaVerdict& verdict) {
   std::uint64_t named = 0;
   for (const auto& [first, last] : verdict.absent_runs) {
     if (named > 0 && text.size() > kLongestList) break;
-    text += fmt::format("{}{}", text.empty() ? "" : ", ", first == last ? grouped(first) : grouped(first) + " to " + grouped(last));
+    text += fmt::format("{}{}", text.empty() ? "" : ", ",
+                        first == last ? grouped(first) : grouped(first) + " to " + grouped(last));
     named += last - first + 1;
   }
   return text + (named < verdict.absent ? fmt::format(" and {} more", grouped(verdict.absent - named)) : "");
@@ -64,19 +66,23 @@ std::string absent_in_words(const AreaVerdict& verdict) {
 std::string counts_in_words(const AreaVerdict& verdict) {
   std::string text;
   if (verdict.claimed.cover)
-    text += fmt::format("  at most: {} blocks with {} discs or cells outside M and {} inside (Lemma A1)\n", grouped(verdict.blocks),
+    text += fmt::format("  at most: a cover with {} discs or cells outside M and {} inside (Lemma A1)\n",
                         grouped(verdict.outside_marks), grouped(verdict.inside_marks));
   if (verdict.components > 0)
     text += fmt::format("  at least: {} hyperbolic components (Lemma A2)\n", grouped(verdict.components));
-  return text + fmt::format("  established in balls too: {} marks; in balls alone: {}\n", grouped(verdict.sampled), grouped(verdict.fallbacks));
+  return text + fmt::format("  established in balls too: {} marks; in balls alone: {}\n", grouped(verdict.sampled),
+                            grouped(verdict.fallbacks));
 }
 
 std::string in_words(const std::string& path, const AreaVerdict& verdict, std::uint64_t seed) {
-  std::string text = fmt::format("{}\n  claim: the area of {} is in {}\n", file_in_words(path), place_in_words(verdict.claimed),
-                                 interval(verdict.claimed.at_least, verdict.claimed.at_most));
+  std::string text =
+      fmt::format("{}\n  claim: the area of {} is in {}\n", file_in_words(path), place_in_words(verdict.claimed),
+                  interval(verdict.claimed.at_least, verdict.claimed.at_most));
   for (const std::string& failure : verdict.failures) text += "  " + failure + "\n";
   if (verdict.over_limit) text += "  " + *verdict.over_limit + "\n";
-  if (verdict.absent > 0) text += fmt::format("  absent, not established: block{} {}\n", verdict.absent == 1 ? "" : "s", absent_in_words(verdict));
+  if (verdict.absent > 0)
+    text += fmt::format("  absent, not established: block{} {}\n", verdict.absent == 1 ? "" : "s",
+                        absent_in_words(verdict));
   if (!verdict.fault && verdict.failed == 0 && !verdict.over_limit) {
     text += fmt::format("  computed here{}: {}\n", verdict.absent > 0 ? ", from what absent blocks claim too" : "",
                         interval(verdict.at_least, verdict.at_most));
@@ -119,9 +125,10 @@ std::string proof_in_words(const AreaVerdict& verdict, const Notation& n) {
 std::string sentence(const AreaVerdict& verdict, StatementForm form) {
   const Notation n(form);
   const std::string ends = interval(verdict.claimed.at_least, verdict.claimed.at_most);
-  return fmt::format("The area of {} lies in {}. {} established by merestone-check {} from the certificate with claims-digest {}.\n",
-                     place_in_words(verdict.claimed, n), n.formula(ends), proof_in_words(verdict, n), kProgramVersion,
-                     n.digest(hexadecimal(verdict.end->digest)));
+  return fmt::format(
+      "The area of {} lies in {}. {} established by merestone-check {} from the certificate with claims-digest {}.\n",
+      place_in_words(verdict.claimed, n), n.formula(ends), proof_in_words(verdict, n), kProgramVersion,
+      n.digest(hexadecimal(verdict.end->digest)));
 }
 
 void complain_of(const std::string& path, const AreaVerdict& verdict) {

@@ -109,7 +109,10 @@ FileCheck::Ended FileCheck::check_container_sample(ByteSource source) {
   std::error_code ignored;
   if (path_ == "-" || !fs::is_regular_file(path_, ignored))
     return input_fault("--sample reads a container twice and this can be read only once; save it to a file first");
-  Read<ListReader> first_reader = ListReader::open(ContainerReader::open(std::move(source)));
+  Read<ContainerReader> frame = ContainerReader::open(std::move(source));
+  if (const auto* opened = std::get_if<ContainerReader>(&frame); opened != nullptr && opened->content() == kAreaContent)
+    return input_fault("--sample draws claims of a list, and this is about an area; leave it out");
+  Read<ListReader> first_reader = ListReader::open(std::move(frame));
   if (const ReadFault* fault = fault_of(first_reader)) return *fault;
   ContainerSource first(std::move(std::get<ListReader>(first_reader)), Selection::nothing(), true);
   const Ended first_ended = read_only(first);
@@ -140,7 +143,9 @@ ExitCode FileCheck::check_area_container(Read<ContainerReader> frame) {
 
 std::string FileCheck::progress_line(double seconds) const {
   const std::uint64_t claims = report_.claims_done(), blocks = blocks_done_;
-  const std::string done = blocks > 0 ? grouped(blocks) + " blocks" : claims > 0 ? grouped(claims) + " claims" : "reading";
+  const std::string done = blocks > 0   ? grouped(blocks) + " blocks"
+                           : claims > 0 ? grouped(claims) + " claims"
+                                        : "reading";
   return fmt::format("{}: {}, {:.0f} s", file_in_words(path_), done, seconds);
 }
 
@@ -158,7 +163,8 @@ ExitCode FileCheck::run() {
   } else {
     Read<ContainerReader> frame = ContainerReader::open(std::move(source));
     const auto* const opened_frame = std::get_if<ContainerReader>(&frame);
-    if (opened_frame != nullptr && opened_frame->content() == kAreaContent) return check_area_container(std::move(frame));
+    if (opened_frame != nullptr && opened_frame->content() == kAreaContent)
+      return check_area_container(std::move(frame));
     ended = check_container(std::move(frame));
   }
   progress_.reset();

@@ -59,7 +59,7 @@ Exit codes:
   2  usage, or a certificate that is malformed, damaged or of a newer version
   3  a claim was refused because it goes over --max-work or --max-bits
   4  a file could not be read, or the output not written
-  5  established on a sample only
+  5  established on a sample only, or but for blocks that are absent
   With several files the first of 4, 2, 1, 3, 5, 0 that occurs.
 )";
 
@@ -83,7 +83,7 @@ void add_output(CLI::App& program, CheckWords& words) {
 void add_limits(CLI::App& program, CheckWords& words) {
   program
       .add_option("--max-work", words.limits.work,
-                  "Most work that one claim may imply; all of a file may imply 10 times as much")
+                  "Most work that one claim may imply; all of a file may imply 10 times as much, of an area 100 times")
       ->type_name("N")
       ->check(CLI::Range(std::uint64_t{1}, kMostWork).description(""))
       ->capture_default_str();

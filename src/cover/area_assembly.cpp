@@ -11,7 +11,8 @@ class Assembly {
  public:
   Assembly(AreaWriter writer, AtomicFile file) : writer_(std::move(writer)), file_(std::move(file)) {}
 
-  Result<WrittenArea> run(const AreaResult& result, const BlockStore& store, bool outline, const nlohmann::json& provenance) {
+  Result<WrittenArea> run(const AreaResult& result, const BlockStore& store, bool outline,
+                          const nlohmann::json& provenance) {
     if (auto problem = put(writer_.header(provenance))) return *problem;
     if (auto problem = put(pack_trunk(result.trunk.block))) return *problem;
     for (const BlockPlace& place : result.trunk.places)
@@ -28,7 +29,9 @@ class Assembly {
     bytes_ += bytes.size();
     return file_.write(bytes);
   }
-  std::optional<Failure> put(const Result<PackedBlock>& block) { return block ? put(writer_.block(*block)) : block.failure(); }
+  std::optional<Failure> put(const Result<PackedBlock>& block) {
+    return block ? put(writer_.block(*block)) : block.failure();
+  }
   std::optional<Failure> put_outline(const BlockStore& store, const BlockPlace& place) {
     const Result<PackedBlock> packed = store.packed(place);
     if (!packed) return packed.failure();
@@ -44,8 +47,8 @@ class Assembly {
 
 }  // namespace
 
-Result<WrittenArea> assemble_area(const AreaResult& result, const BlockStore& store, const std::string& path, bool outline,
-                                  const nlohmann::json& provenance) {
+Result<WrittenArea> assemble_area(const AreaResult& result, const BlockStore& store, const std::string& path,
+                                  bool outline, const nlohmann::json& provenance) {
   Result<AreaWriter> writer = AreaWriter::create(result.header);
   if (!writer) return writer.failure();
   Result<AtomicFile> file = AtomicFile::create(path);

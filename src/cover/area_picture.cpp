@@ -31,7 +31,8 @@ unsigned depth_of(const RationalBox& box, unsigned pixels) {
 
 Colour mixed(const Colour& a, const Colour& b, const Colour& c, double share_a, double share_b) {
   const auto channel = [&](std::uint8_t Colour::*which) {
-    return static_cast<std::uint8_t>(std::lround(share_a * a.*which + share_b * b.*which + (1 - share_a - share_b) * c.*which));
+    return static_cast<std::uint8_t>(
+        std::lround(share_a * a.*which + share_b * b.*which + (1 - share_a - share_b) * c.*which));
   };
   return {channel(&Colour::red), channel(&Colour::green), channel(&Colour::blue)};
 }
@@ -39,7 +40,9 @@ Colour mixed(const Colour& a, const Colour& b, const Colour& c, double share_a, 
 class Drawing {
  public:
   Drawing(const AreaCover& cover, unsigned depth)
-      : cover_(cover), depth_(depth), trunk_(search_block(root(), window_of(cover, root()), trunk_effort())),
+      : cover_(cover),
+        depth_(depth),
+        trunk_(search_block(root(), window_of(cover, root()), trunk_effort())),
         cells_(window_of({root().x, root().y, root().side_exponent, depth}, *cover.within).touching),
         picture_(cells_.end_column - cells_.first_column, cells_.end_row - cells_.first_row) {}
 
@@ -51,7 +54,9 @@ class Drawing {
 
  private:
   const CoverSquare& root() const { return cover_.plan.root; }
-  CoverEffort trunk_effort() const { return {root().grade, 0, block_effort(cover_, depth_, true).steps, cover_.plan.rules, true}; }
+  CoverEffort trunk_effort() const {
+    return {root().grade, 0, block_effort(cover_, depth_, true).steps, cover_.plan.rules, true};
+  }
   std::uint32_t block_side() const { return std::uint32_t{1} << (depth_ - root().grade); }
 
   void draw_block(std::uint32_t column, std::uint32_t row) {
@@ -80,7 +85,8 @@ class Drawing {
     for (std::uint32_t y = 0; y < block_side(); ++y)
       for (std::uint32_t x = 0; x < block_side(); ++x) {
         const std::uint32_t cell_x = column * block_side() + x, cell_y = row * block_side() + y;
-        if (cells_.meets(cell_x, cell_y, 1)) draw(x, y, picture_.at(cell_x - cells_.first_column, cells_.end_row - 1 - cell_y));
+        if (cells_.meets(cell_x, cell_y, 1))
+          draw(x, y, picture_.at(cell_x - cells_.first_column, cells_.end_row - 1 - cell_y));
       }
   }
 

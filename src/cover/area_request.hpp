@@ -10,9 +10,9 @@ namespace merestone {
 struct AreaRequest {
   std::optional<RationalBox> within;  // nothing: all of M
   CoverRules rules = CoverRules::all;
-  unsigned depth = 17;             // cells have the 2^-depth-th part of the root's side
-  std::optional<double> seconds;   // then the depth is what they allow, block by block
-  std::optional<int> resolution;   // of the catalogue of components; nothing: cells inside bound the area from below
+  unsigned depth = 17;            // cells have the 2^-depth-th part of the root's side
+  std::optional<double> seconds;  // then the depth is what they allow, block by block
+  std::optional<int> resolution;  // of the catalogue of components; nothing: cells inside bound the area from below
   bool with_inside() const { return !resolution.has_value(); }
 };
 

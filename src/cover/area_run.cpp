@@ -83,8 +83,10 @@ std::optional<Failure> AreaRun::resume_components() {
   std::atomic<bool> is_proved = !check_distinct(list);
   oneapi::tbb::parallel_for(std::size_t{0}, list.size(), [&](std::size_t i) {
     const Result<ComponentArea> proved = establish_component(list[i]);
-    if (proved) areas[i] = counted_area(list[i], proved->lower);
-    else is_proved = false;
+    if (proved)
+      areas[i] = counted_area(list[i], proved->lower);
+    else
+      is_proved = false;
   });
   if (!is_proved) return Failure{"the journal's list of components is not established; begin anew without --resume"};
   result_.header.at_least = rounded_down(std::accumulate(areas.begin(), areas.end(), Dyadic()));
@@ -124,7 +126,8 @@ DepthPolicy AreaRun::policy_for(const std::vector<BlockPlace>& left) const {
   const AreaCover& cover = *result_.header.cover;
   const double trial = seconds_of_block(cover, left, request_.depth - kShallower, request_.with_inside());
   const double spent = std::chrono::duration<double>(Clock::now() - start_).count();
-  return DepthPolicy::timed(request_.depth - kShallower, block_depths(cover), trial, *request_.seconds - spent, options_.threads);
+  return DepthPolicy::timed(request_.depth - kShallower, block_depths(cover), trial, *request_.seconds - spent,
+                            options_.threads);
 }
 
 std::optional<Failure> AreaRun::take(const FinishedBlock& finished, AreaTally& tally) {

@@ -20,10 +20,10 @@ struct AreaProgress {
 
 /// What a run proved.
 struct AreaResult {
-  AreaHeader header;                // the bounds, and of what
-  Trunk trunk;                      // its places are the blocks
+  AreaHeader header;  // the bounds, and of what
+  Trunk trunk;        // its places are the blocks
   std::vector<Component> components;
-  std::size_t resumed_blocks = 0;   // that were in the store already
+  std::size_t resumed_blocks = 0;               // that were in the store already
   unsigned least_depth = 0, largest_depth = 0;  // of cells
 };
 
@@ -35,8 +35,8 @@ struct AreaRunOptions {
 };
 
 /// Bounds the area from both sides: components first (Lemma A2), then the cover (Lemma A1).
-/// On failure: the store cannot be written, or the box cannot be cut so deep. Nothing in it: the run was ended; what was
-/// finished is in the store.
+/// On failure: the store cannot be written, or the box cannot be cut so deep. Nothing in it: the run was ended; what
+/// was finished is in the store.
 Result<std::optional<AreaResult>> run_area(const AreaRequest& request, const AreaRunOptions& options);
 
 }  // namespace merestone

@@ -49,9 +49,12 @@ std::optional<Failure> run_blocks(const AreaCover& cover, std::span<const BlockP
     if (!packed) failure = packed.failure();
     if (!packed || !take({place, std::move(block), std::move(packed.value())})) stopped = true;
   };
-  tbb::parallel_for(tbb::blocked_range<std::size_t>(0, places.size(), 1), [&](const auto& range) {
-    for (std::size_t i = range.begin(); i != range.end(); ++i) run_one(places[i]);
-  }, tbb::simple_partitioner());
+  tbb::parallel_for(
+      tbb::blocked_range<std::size_t>(0, places.size(), 1),
+      [&](const auto& range) {
+        for (std::size_t i = range.begin(); i != range.end(); ++i) run_one(places[i]);
+      },
+      tbb::simple_partitioner());
   return failure;
 }
 

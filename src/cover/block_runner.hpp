@@ -21,9 +21,9 @@ struct RunnerOptions {
   bool with_inside = false;
 };
 
-/// Searches the blocks of these places, on so many threads. `take` is given each as it is finished, by one thread at a time, in
-/// any order; when it returns false no more are begun. A block depends on its place and depth alone.
-/// On failure: a block could not be packed.
+/// Searches the blocks of these places, on so many threads. `take` is given each as it is finished, by one thread at a
+/// time, in any order; when it returns false no more are begun. A block depends on its place and depth alone. On
+/// failure: a block could not be packed.
 std::optional<Failure> run_blocks(const AreaCover& cover, std::span<const BlockPlace> places, DepthPolicy& policy,
                                   const RunnerOptions& options, const std::function<bool(FinishedBlock&&)>& take);
 

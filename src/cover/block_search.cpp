@@ -29,7 +29,12 @@ CoverInside as_inside(const DoubleDisc& cycle) {
 class BlockSearch {
  public:
   BlockSearch(const CoverSquare& square, const CoverWindow& window, const CoverEffort& effort)
-      : geometry_(square), window_(window), effort_(effort), square_(square), outside_(square.grade), inside_(square.grade),
+      : geometry_(square),
+        window_(window),
+        effort_(effort),
+        square_(square),
+        outside_(square.grade),
+        inside_(square.grade),
         outside_marks_(effort.depth + 1) {
     limits_.steps = effort.steps;
     limits_.smallest = kSmallestDisc * geometry_.side(square.grade);
@@ -55,7 +60,8 @@ class BlockSearch {
   void take_outside(const CoverCell& cell, unsigned depth, const DoubleCircle& circle);
   void take_stayed(Candidate& candidate, unsigned depth, const DoublePoint& z);
   bool paint(Canvas& canvas, const DoubleCircle& circle) const {
-    return canvas.paint_disc(geometry_.fine_x(circle.x), geometry_.fine_y(circle.y), geometry_.in_fine_cells(circle.radius));
+    return canvas.paint_disc(geometry_.fine_x(circle.x), geometry_.fine_y(circle.y),
+                             geometry_.in_fine_cells(circle.radius));
   }
   BlockFindings findings();
   void record_inside_marks(CoverBlock& block);
@@ -148,7 +154,8 @@ void BlockSearch::mark_by_escape(const std::vector<Candidate>& cells, unsigned d
   for (const auto& [cell, hint] : cells) {
     if (mark_closed_form(cell, depth)) continue;
     const double reach = kHalfDiagonal * geometry_.side(depth);
-    const RegionEscape escape = region_escape({geometry_.x(cell, depth), geometry_.y(cell, depth), reach}, effort_.steps);
+    const RegionEscape escape =
+        region_escape({geometry_.x(cell, depth), geometry_.y(cell, depth), reach}, effort_.steps);
     if (escape.index == 0) continue;
     outside_.paint_square(cell.column * size, cell.row * size, size);
     outside_marks_[depth].push_back(cell.order);

@@ -10,7 +10,9 @@ namespace {
 constexpr std::uint64_t kComponents = std::uint64_t{1} << 62;
 constexpr unsigned kCountBits = 20;
 
-std::uint64_t component_key(std::uint64_t blocks, std::uint64_t which) { return kComponents | blocks << kCountBits | which; }
+std::uint64_t component_key(std::uint64_t blocks, std::uint64_t which) {
+  return kComponents | blocks << kCountBits | which;
+}
 
 StoredBlock as_stored(PackedBlock block) {
   StoredBlock stored;

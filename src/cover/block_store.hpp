@@ -14,7 +14,9 @@ class BlockStore {
   explicit BlockStore(Journal journal) : journal_(std::move(journal)) {}
 
   bool has(const BlockPlace& place) const { return journal_.contains(place.key()); }
-  std::optional<Failure> put(const BlockPlace& place, const PackedBlock& block) { return journal_.append(place.key(), block); }
+  std::optional<Failure> put(const BlockPlace& place, const PackedBlock& block) {
+    return journal_.append(place.key(), block);
+  }
   Result<PackedBlock> packed(const BlockPlace& place) const { return journal_.read(place.key()); }
   Result<CoverBlock> block(const BlockPlace& place) const;
 

@@ -17,7 +17,8 @@ MarkedCells needed_cells(const MarkedCells& marked) {
     for (const std::uint32_t order : needed[d])
       if (parents.empty() || parents.back() != order / 4) parents.push_back(order / 4);
     std::vector<std::uint32_t> both;
-    std::set_union(parents.begin(), parents.end(), needed[d - 1].begin(), needed[d - 1].end(), std::back_inserter(both));
+    std::set_union(parents.begin(), parents.end(), needed[d - 1].begin(), needed[d - 1].end(),
+                   std::back_inserter(both));
     needed[d - 1] = std::move(both);
   }
   return needed;
@@ -43,7 +44,9 @@ class Cursor {
 CoverGeometry::CoverGeometry(const CoverSquare& square)
     : square_(square), fine_scale_(std::ldexp(1.0, static_cast<int>(square.grade) - square.side_exponent)) {}
 
-double CoverGeometry::side(unsigned depth) const { return std::ldexp(1.0, square_.side_exponent - static_cast<int>(depth)); }
+double CoverGeometry::side(unsigned depth) const {
+  return std::ldexp(1.0, square_.side_exponent - static_cast<int>(depth));
+}
 
 CoverTree tree_of(const MarkedCells& marked) {
   static const std::vector<std::uint32_t> kNone;

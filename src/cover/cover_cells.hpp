@@ -6,8 +6,8 @@
 
 namespace merestone {
 
-/// A cell of some depth of a square: the place of the cell among all of its depth, in the order in which trees name them
-/// (Morton order), and its column and row.
+/// A cell of some depth of a square: the place of the cell among all of its depth, in the order in which trees name
+/// them (Morton order), and its column and row.
 struct CoverCell {
   std::uint32_t order = 0, column = 0, row = 0;
 

@@ -21,7 +21,8 @@ class CycleHints {
   static constexpr std::uint32_t kNone = ~std::uint32_t{0};
 
   /// `near` is the index of a mark found nearby, or kNone; `z` about z_n of the parameter for an n that is large.
-  std::optional<InteriorMark> find(const DoublePoint& c, const DoublePoint& z, std::uint32_t near, std::uint32_t steps) const;
+  std::optional<InteriorMark> find(const DoublePoint& c, const DoublePoint& z, std::uint32_t near,
+                                   std::uint32_t steps) const;
   /// Keeps a mark; its index.
   std::uint32_t keep(const InteriorMark& mark);
 

@@ -24,8 +24,13 @@ DepthPolicy DepthPolicy::timed(unsigned depth, DepthRange allowed, double second
 }
 
 DepthPolicy::DepthPolicy(DepthPolicy&& other) noexcept
-    : depth_(other.depth_), allowed_(other.allowed_), is_timed_(other.is_timed_), seconds_of_block_(other.seconds_of_block_),
-      trials_(other.trials_), end_(other.end_), threads_(other.threads_) {}
+    : depth_(other.depth_),
+      allowed_(other.allowed_),
+      is_timed_(other.is_timed_),
+      seconds_of_block_(other.seconds_of_block_),
+      trials_(other.trials_),
+      end_(other.end_),
+      threads_(other.threads_) {}
 
 double DepthPolicy::expected(int deeper) const { return seconds_of_block_ * std::pow(kGrowth, deeper); }
 

@@ -14,10 +14,11 @@ struct DepthRange {
 class DepthPolicy {
  public:
   static DepthPolicy fixed(unsigned depth) { return DepthPolicy(depth); }
-  /// For work that is to end so many seconds from now on so many threads, no depth being outside `allowed`. `seconds_of_block` is
-  /// what a block of the depth, which is allowed, took on average in a trial; a block one depth deeper takes a constant times as
-  /// long.
-  static DepthPolicy timed(unsigned depth, DepthRange allowed, double seconds_of_block, double seconds, unsigned threads);
+  /// For work that is to end so many seconds from now on so many threads, no depth being outside `allowed`.
+  /// `seconds_of_block` is what a block of the depth, which is allowed, took on average in a trial; a block one depth
+  /// deeper takes a constant times as long.
+  static DepthPolicy timed(unsigned depth, DepthRange allowed, double seconds_of_block, double seconds,
+                           unsigned threads);
 
   DepthPolicy(DepthPolicy&& other) noexcept;
 

@@ -53,7 +53,7 @@ Result<AreaCover> cover_of_box(const RationalBox& box, CoverRules rules, unsigne
     x = corner(box.lo.re), y = corner(box.lo.im);
   }
   if (side - static_cast<std::int32_t>(depth + kCut) < kFinestCell)
-    return Failure{"the box is too small to be cut so deep in double precision"};
+    return Failure{"the box is too small to be cut so deep in double precision; give a smaller --depth"};
   return AreaCover{{{x, y, side, trunk_grade(depth)}, rules}, false, box};
 }
 
@@ -77,7 +77,8 @@ Trunk search_trunk(const AreaCover& cover) {
   Trunk trunk{std::move(found.block), {}, {}};
   for (std::uint32_t row = window.touching.first_row; row < window.touching.end_row; ++row)
     for (std::uint32_t column = window.touching.first_column; column < window.touching.end_column; ++column)
-      if (!found.outside.is_painted(column, row) && !(found.inside.is_painted(column, row) && window.within.meets(column, row, 1)))
+      if (!found.outside.is_painted(column, row) &&
+          !(found.inside.is_painted(column, row) && window.within.meets(column, row, 1)))
         trunk.places.push_back({column, row});
   trunk.inside.add(trunk.block.inside_cells, root.side_exponent - static_cast<std::int32_t>(root.grade));
   return trunk;

@@ -32,13 +32,18 @@ void fill(Picture& picture, std::size_t left, std::size_t top, std::size_t size_
       picture.at(column, row) = colour;
 }
 
+// An entry: its swatch, its word and some room, at scale 1.
+constexpr std::size_t kSwatch = 11;
+std::size_t width_of(const LegendEntry& entry) { return kSwatch + entry.word.size() * (kGlyphWidth + 1) + 6; }
+
 void write(Picture& picture, std::string_view word, std::size_t left, std::size_t top, std::size_t scale) {
   for (const char letter : word) {
     const auto* const glyph = std::ranges::find(kGlyphs, letter, &Glyph::letter);
     if (glyph != kGlyphs.end())
       for (std::size_t y = 0; y < kGlyphHeight; ++y)
         for (std::size_t x = 0; x < kGlyphWidth; ++x)
-          if (glyph->rows[y][x] == '#') fill(picture, left + x * scale, top + y * scale, scale, scale, okabe_ito::kBlack);
+          if (glyph->rows[y][x] == '#')
+            fill(picture, left + x * scale, top + y * scale, scale, scale, okabe_ito::kBlack);
     left += (kGlyphWidth + 1) * scale;
   }
 }
@@ -47,16 +52,19 @@ void write(Picture& picture, std::string_view word, std::size_t left, std::size_
 
 Picture with_legend(const Picture& picture, const std::vector<LegendEntry>& entries) {
   const std::size_t scale = std::clamp<std::size_t>(picture.width() / 400, 1, 6), line = 12 * scale;
-  Picture whole(picture.width(), picture.height() + line);
-  for (std::size_t row = 0; row < picture.height(); ++row) std::copy_n(picture.row(row), picture.width(), &whole.at(0, row));
+  std::size_t needed = 4 * scale;
+  for (const LegendEntry& entry : entries) needed += width_of(entry) * scale;
+  Picture whole(std::max(picture.width(), needed), picture.height() + line);
+  for (std::size_t row = 0; row < picture.height(); ++row)
+    std::copy_n(picture.row(row), picture.width(), &whole.at(0, row));
   const std::size_t top = picture.height() + 2 * scale;
   std::size_t left = 4 * scale;
   for (const LegendEntry& entry : entries) {
     fill(whole, left, top, 8 * scale, 8 * scale, okabe_ito::kBlack);
     fill(whole, left + scale, top + scale, 6 * scale, 6 * scale, entry.colour);
-    left += 11 * scale;
+    left += kSwatch * scale;
     write(whole, entry.word, left, top, scale);
-    left += (entry.word.size() * (kGlyphWidth + 1) + 6) * scale;
+    left += (width_of(entry) - kSwatch) * scale;
   }
   return whole;
 }

@@ -21,7 +21,8 @@ inline constexpr Colour kBlack{0, 0, 0}, kOrange{230, 159, 0}, kSkyBlue{86, 180,
 class Picture {
  public:
   /// All white.
-  Picture(std::size_t width, std::size_t height) : width_(width), height_(height), pixels_(width * height, Colour{255, 255, 255}) {}
+  Picture(std::size_t width, std::size_t height)
+      : width_(width), height_(height), pixels_(width * height, Colour{255, 255, 255}) {}
 
   std::size_t width() const { return width_; }
   std::size_t height() const { return height_; }
@@ -35,7 +36,8 @@ class Picture {
   std::vector<Colour> pixels_;
 };
 
-/// Adds a strip below the picture with a swatch and a word for each colour. Words of the letters c d e i n o s t u.
+/// Adds a strip below, and white at the right where the picture is narrower than that, the picture with a swatch and a
+/// word for each colour. Words of the letters c d e i n o s t u.
 struct LegendEntry {
   Colour colour;
   std::string_view word;

@@ -4,7 +4,8 @@
 
 namespace merestone {
 
-/// The fine cells with first_column <= column < end_column and first_row <= row < end_row; none where an end is not above.
+/// The fine cells with first_column <= column < end_column and first_row <= row < end_row; none where an end is not
+/// above.
 struct CellRange {
   std::uint32_t first_column = 0, end_column = 0, first_row = 0, end_row = 0;
 
@@ -15,8 +16,8 @@ struct CellRange {
   }
 };
 
-/// A square of 2^grade x 2^grade fine cells, each painted or not. Coordinates are in fine cells, from the lower left corner;
-/// cell (column, row) is the closed square [column, column + 1] x [row, row + 1].
+/// A square of 2^grade x 2^grade fine cells, each painted or not. Coordinates are in fine cells, from the lower left
+/// corner; cell (column, row) is the closed square [column, column + 1] x [row, row + 1].
 class Canvas {
  public:
   static constexpr unsigned kLargestGrade = 13;
@@ -28,19 +29,21 @@ class Canvas {
   std::uint32_t side() const { return std::uint32_t{1} << grade_; }
   std::uint64_t cells() const { return std::uint64_t{1} << (2 * grade_); }
 
-  /// Paints cells that lie in the closed disc about x + iy, and none that does not (Lemma N2); whether any of them is new.
-  /// Nothing for a radius below 2^-20, numbers that are none, and a centre more than 4 sides away.
+  /// Paints cells that lie in the closed disc about x + iy, and none that does not (Lemma N2); whether any of them is
+  /// new. Nothing for a radius below 2^-20, numbers that are none, and a centre more than 4 sides away.
   bool paint_disc(double x, double y, double radius);
 
-  /// Paints the square of size x size cells from (column, row); whether any of them is new. Requires that it lies in the canvas.
+  /// Paints the square of size x size cells from (column, row); whether any of them is new. Requires that it lies in
+  /// the canvas.
   bool paint_square(std::uint32_t column, std::uint32_t row, std::uint32_t size);
 
   bool is_painted(std::uint32_t column, std::uint32_t row) const;
   std::uint64_t painted() const;
-  /// How many cells of the range are painted. Requires that it lies in the canvas, and that its ends are not below its firsts.
+  /// How many cells of the range are painted. Requires that it lies in the canvas, and that its ends are not below its
+  /// firsts.
   std::uint64_t painted_in(const CellRange& range) const;
-  /// Whether every cell of a square is painted here or on the other canvas, which has the same grade. Requires that the square
-  /// lies in the canvas, and that `column` is a multiple of `size`, a power of two.
+  /// Whether every cell of a square is painted here or on the other canvas, which has the same grade. Requires that the
+  /// square lies in the canvas, and that `column` is a multiple of `size`, a power of two.
   bool is_full_with(const Canvas& other, std::uint32_t column, std::uint32_t row, std::uint32_t size) const;
   /// Whether a cell is painted here and on the other canvas, which has the same grade.
   bool overlaps(const Canvas& other) const;

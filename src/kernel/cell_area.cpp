@@ -7,8 +7,10 @@ namespace merestone {
 Dyadic CellArea::total() const {
   Dyadic sum;
   for (const auto& [side_exponent, cells] : cells_) {
-    Arf count;
-    arf_set_ui(count, cells);
+    Arf count;  // in halves, since an unsigned integer of the library has 32 bits on some machines
+    arf_set_ui(count, static_cast<std::uint32_t>(cells >> 32));
+    arf_mul_2exp_si(count, count, 32);
+    arf_add_ui(count, count, static_cast<std::uint32_t>(cells), ARF_PREC_EXACT, ARF_RND_DOWN);
     sum = sum + Dyadic(count).shifted(2L * side_exponent);
   }
   return sum;

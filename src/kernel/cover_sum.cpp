@@ -25,14 +25,21 @@ std::optional<Failure> check_reach(const CoverSquare& root, bool mirrored, const
     if (!contains(within->lo.re, within->hi.re, within->lo.im, within->hi.im)) return does_not_contain("the box");
     return std::nullopt;
   }
-  if (mirrored && y != Rational(0)) return Failure{"the cover is doubled by conjugation, and its root does not stand on the real axis"};
-  if (!contains(-2, 2, mirrored ? 0 : -2, 2)) return does_not_contain(mirrored ? "the upper half of |c| <= 2" : "all of |c| <= 2");
+  if (mirrored && y != Rational(0))
+    return Failure{"the cover is doubled by conjugation, and its root does not stand on the real axis"};
+  if (!contains(-2, 2, mirrored ? 0 : -2, 2))
+    return does_not_contain(mirrored ? "the upper half of |c| <= 2" : "all of |c| <= 2");
   return std::nullopt;
 }
 
-CoverSum::CoverSum(const CoverPlan& plan, bool mirrored, const std::optional<RationalBox>& within, const CoverProof& trunk)
-    : plan_(plan), mirrored_(mirrored), within_(within), trunk_window_(window(plan.root)),
-      decided_(std::size_t{1} << (2 * plan.root.grade)), has_block_(decided_.size()) {
+CoverSum::CoverSum(const CoverPlan& plan, bool mirrored, const std::optional<RationalBox>& within,
+                   const CoverProof& trunk)
+    : plan_(plan),
+      mirrored_(mirrored),
+      within_(within),
+      trunk_window_(window(plan.root)),
+      decided_(std::size_t{1} << (2 * plan.root.grade)),
+      has_block_(decided_.size()) {
   const std::uint32_t side = std::uint32_t{1} << plan.root.grade;
   for (std::uint32_t row = 0; row < side; ++row)
     for (std::uint32_t column = 0; column < side; ++column) {
@@ -57,7 +64,8 @@ std::optional<Failure> CoverSum::add(const CoverBlock& block, std::uint64_t outs
   const std::int32_t cell = at.side_exponent - static_cast<std::int32_t>(at.grade);
   const CoverWindow part = window(at);
   if (outside_cells > part.touching.cells() || inside_cells > part.within.cells())
-    return Failure{place_in_words(block.column, block.row) + ": of its block more cells are claimed outside or inside than count there"};
+    return Failure{place_in_words(block.column, block.row) +
+                   ": of its block more cells are claimed outside or inside than count there"};
   kept_.add(part.touching.cells() - outside_cells, cell);
   inside_.add(inside_cells, cell);
   return std::nullopt;

@@ -30,7 +30,8 @@ Interval cells_between(const Rational& lo, const Rational& hi, double corner, co
   return {clamped_floor(first, side), clamped_ceil(end, side), clamped_ceil(first, side), clamped_floor(end, side)};
 }
 
-CellRange range_of(std::uint32_t first_column, std::uint32_t end_column, std::uint32_t first_row, std::uint32_t end_row) {
+CellRange range_of(std::uint32_t first_column, std::uint32_t end_column, std::uint32_t first_row,
+                   std::uint32_t end_row) {
   return {first_column, std::max(first_column, end_column), first_row, std::max(first_row, end_row)};
 }
 

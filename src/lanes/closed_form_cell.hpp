@@ -5,10 +5,10 @@
 
 namespace merestone {
 
-/// Lemma I3 over a disc, in double precision: true is a proof that it lies inside, in the main cardioid or in the disc of
-/// period 2. Requires a radius >= 0.
+/// Lemma I3 over a disc, in double precision: true is a proof that it lies inside, in the main cardioid or in the disc
+/// of period 2. Requires a radius >= 0.
 inline bool lies_in_closed_form(const DoubleCircle& disc) {
-  constexpr double kBend = 16;         // half a bound of the second derivative over the box below
+  constexpr double kBend = 16;           // half a bound of the second derivative over the box below
   constexpr double kRelative = 0x1p-40;  // far above the rounding of each expression
   const double u = disc.x - 0.25, y = disc.y, r = disc.radius;
   const double reach = std::sqrt((disc.x + 1) * (disc.x + 1) + y * y) + r;

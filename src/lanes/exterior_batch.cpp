@@ -2,9 +2,9 @@
 
 #undef HWY_TARGET_INCLUDE
 #define HWY_TARGET_INCLUDE "lanes/exterior_batch.cpp"
+#include <hwy/foreach_target.h>
 #include <algorithm>
 #include <cmath>
-#include <hwy/foreach_target.h>
 
 #include "lanes/jet_lanes-inl.hpp"
 
@@ -23,7 +23,8 @@ struct alignas(64) StoredJet {
     return {at(0), at(1), at(2), at(3), at(4), at(5), at(6), at(7), at(8), at(9), at(10)};
   }
   HWY_INLINE void store(const Jet& j) {
-    const Number* const numbers[kFields] = {&j.zx, &j.zy, &j.ax, &j.ay, &j.bx, &j.by, &j.ez, &j.ea, &j.eb, &j.cx, &j.cy};
+    const Number* const numbers[kFields] = {&j.zx, &j.zy, &j.ax, &j.ay, &j.bx, &j.by,
+                                            &j.ez, &j.ea, &j.eb, &j.cx, &j.cy};
     for (std::size_t k = 0; k < kFields; ++k) numbers[k]->store(field[k]);
   }
   void start(std::size_t lane, const DoublePoint& c) {
@@ -50,7 +51,8 @@ class ReadOff {
     alignas(64) double x[kMostLanes], y[kMostLanes], radius[kMostLanes];
     discs.x.store(x), discs.y.store(y), discs.radius.store(radius);
     for (std::size_t i = 0; i < count_; ++i)
-      marks_[positions_[i]] = {{x[i], y[i], radius[i]}, radius[i] > 0 ? ExteriorMark::End::proved : ExteriorMark::End::left};
+      marks_[positions_[i]] = {{x[i], y[i], radius[i]},
+                               radius[i] > 0 ? ExteriorMark::End::proved : ExteriorMark::End::left};
     count_ = 0;
   }
 
@@ -62,7 +64,8 @@ class ReadOff {
   std::size_t count_ = 0;
 };
 
-// The lanes, each with an orbit of its own. A lane is looked at after 2, 4, … steps of its own, whatever its neighbours do.
+// The lanes, each with an orbit of its own. A lane is looked at after 2, 4, … steps of its own, whatever its neighbours
+// do.
 class OrbitLanes {
  public:
   OrbitLanes(std::span<const DoublePoint> points, const OrbitLimits& limits, std::span<ExteriorMark> marks)
@@ -119,7 +122,8 @@ class OrbitLanes {
       if (has_left)
         read_off_.take(stored_, lane, position_[lane], steps);
       else
-        marks_[position_[lane]] = {{stored_.field[0][lane], stored_.field[1][lane], 0}, is_gone ? End::close : End::stayed};
+        marks_[position_[lane]] = {{stored_.field[0][lane], stored_.field[1][lane], 0},
+                                   is_gone ? End::close : End::stayed};
       --busy_;
       refill(lane);
     }

@@ -1,6 +1,7 @@
-// The part of exterior_batch.cpp that is compiled once for each instruction set: numbers, the steps of an orbit's jet with
-// the squares of its errors (Lemma E9), and what is read off them (Lemma E3). Only additions, subtractions, multiplications,
-// divisions, square roots and comparisons, each rounded to nearest: every instruction set gives the same bits.
+// The part of exterior_batch.cpp that is compiled once for each instruction set: numbers, the steps of an orbit's jet
+// with the squares of its errors (Lemma E9), and what is read off them (Lemma E3). Only additions, subtractions,
+// multiplications, divisions, square roots and comparisons, each rounded to nearest: every instruction set gives the
+// same bits.
 #if defined(MERESTONE_JET_LANES_INL) == defined(HWY_TARGET_TOGGLE)
 #ifdef MERESTONE_JET_LANES_INL
 #undef MERESTONE_JET_LANES_INL
@@ -48,7 +49,9 @@ HWY_INLINE void step(Jet& j) {
   const Number growth = z2 * Number(0x1.04100000001p+2) + j.ez * Number(521);
   const Number fresh = z2 * Number(3) + Number(2.2);
   const Number shared = j.ez * Number(4) + z2 * Number(0x55p-106);
-  const Number eb = growth * j.eb + (j.ea * (a2 * Number(32) + j.ea * Number(8)) + b2 * shared + a2 * a2 * Number(0x4bp-106)) * Number(388);
+  const Number eb =
+      growth * j.eb +
+      (j.ea * (a2 * Number(32) + j.ea * Number(8)) + b2 * shared + a2 * a2 * Number(0x4bp-106)) * Number(388);
   const Number ea = growth * j.ea + (a2 * shared + Number(0x1.04p-105)) * Number(259);
   const Number ez = growth * j.ez + fresh * fresh * Number(0x82p-106);
 
@@ -69,7 +72,8 @@ HWY_INLINE Number logarithm(Number m) {
   const auto bits = hn::BitCast(integers, m.v);
   const auto exponent = hn::ShiftRight<52>(hn::Sub(bits, hn::Set(integers, 0x3fe6a09e667f3bcd)));
   const Number fraction = hn::BitCast(kTag, hn::Sub(bits, hn::ShiftLeft<52>(exponent)));  // about from 0.7 to 1.42
-  const Number whole = Number(hn::BitCast(kTag, hn::Add(exponent, hn::Set(integers, 0x4338000000000000)))) - Number(0x1.8p+52);
+  const Number whole =
+      Number(hn::BitCast(kTag, hn::Add(exponent, hn::Set(integers, 0x4338000000000000)))) - Number(0x1.8p+52);
   const Number t = (fraction - Number(1)) / (fraction + Number(1)), s = t * t;
   Number series = 1.0 / 23;
   for (int k = 21; k >= 1; k -= 2) series = series * s + Number(1.0 / k);
@@ -97,8 +101,9 @@ HWY_INLINE Discs univalent_discs(const Jet& j, Number fx, Number fy, Number ef, 
   const Number radius = (b * f * margin - (b + a) * ef * Number(1 + 0x1p-20)) / delta;
   const Number x = j.cx + (fx * sx + fy * sy) / delta, y = j.cy + (fy * sx - fx * sy) / delta;
   const Number proved = (radius - Number(0x1p-48)) * margin;
-  const auto in_range = hn::And(hn::And(hn::Le(a.v, Number(8).v), hn::Le(es.v, Number(1).v)),
-                                hn::And(hn::Le(ef.v, f.v), hn::And(hn::Gt(f.v, Number(0x1p-100).v), hn::Lt(f.v, Number(0x1p+10).v))));
+  const auto in_range =
+      hn::And(hn::And(hn::Le(a.v, Number(8).v), hn::Le(es.v, Number(1).v)),
+              hn::And(hn::Le(ef.v, f.v), hn::And(hn::Gt(f.v, Number(0x1p-100).v), hn::Lt(f.v, Number(0x1p+10).v))));
   const auto good = hn::And(in_range, hn::Gt(proved.v, Number(0.0).v));
   return {x, y, hn::IfThenElseZero(good, proved.v)};
 }
@@ -122,11 +127,13 @@ HWY_INLINE Discs read_off(const Jet& j, Number scale) {
   const Number A_up = (A + eA) * up, B_up = (B + eB) * up, w = Number(1) + Number(2) * c * A_up;
   const Number tail = Number(0.505) * c * far;
   const Number tail1 = Number(1.01) * (Number(0.5) + c * A_up) * far;
-  const Number tail2 = Number(1.01) * (Number(2) * A_up + Number(2) * c * A_up * A_up + c * B_up) * far + w * w * far * far;
+  const Number tail2 =
+      Number(1.01) * (Number(2) * A_up + Number(2) * c * A_up * A_up + c * B_up) * far + w * w * far * far;
   const Number e_alpha = (eA + tail1) * up, e_beta = (eB + tail2) * up;
 
   const Number g = logarithm(z2) * Number(0.5);
-  const Number lambda = g * tanh_ratio(scale * g), e_lambda = (Number(0x1p-40) + tail + (ez + ez) / room + lambda * Number(0x1p-44)) * up;
+  const Number lambda = g * tanh_ratio(scale * g),
+               e_lambda = (Number(0x1p-40) + tail + (ez + ez) / room + lambda * Number(0x1p-44)) * up;
   const Number T = scale * lambda, eT = scale * e_lambda;
   const Number least_A = A * Number(1 - 0x1p-50) - e_alpha;
 

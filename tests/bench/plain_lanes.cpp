@@ -2,8 +2,8 @@
 
 #undef HWY_TARGET_INCLUDE
 #define HWY_TARGET_INCLUDE "bench/plain_lanes.cpp"
-#include <cmath>
 #include <hwy/foreach_target.h>
+#include <cmath>
 
 #include <hwy/highway.h>
 

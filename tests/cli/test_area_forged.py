@@ -136,6 +136,12 @@ class InsideMarks(FaultCase):
         for box in ({"re": ["-11/50", "1/2"], "im": ["3/5", "17/20"]}, {"re": ["-11/50", "0"], "im": ["1/2", "17/20"]}):
             self.assertRefused(self.good.with_cover(within=box), REFUTED, "block 0", "does not contain the box")
 
+    def test_components_do_not_count_in_a_box(self):
+        """The main cardioid (nucleus 0, period 1) lies elsewhere; its area, more than 9/8, is none of the box's."""
+        listed = replace(self.good, blocks=self.good.blocks + (component_block([(1, 0.0, 0.0, -20, 3, 64)]),))
+        for at_least in ("0x0p0", "0x9p-3"):
+            self.assertRefused(listed.with_key("at-least", at_least), REFUTED, "the claim is about a box")
+
     def test_the_box_taken_away(self):
         cover = {key: value for key, value in self.good.header["cover"].items() if key != "within"}
         self.assertRefused(self.good.with_key("cover", cover), REFUTED, "block 0", "does not contain all of |c| <= 2")

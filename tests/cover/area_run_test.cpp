@@ -1,5 +1,5 @@
-// Whole runs: the kernel's own sum of the blocks proves the header's bounds; the estimate of the area that is published lies
-// between them (docs: published values; verified); threads, an end in between and a resumption change nothing.
+// Whole runs: the kernel's own sum of the blocks proves the header's bounds; the estimate of the area that is published
+// lies between them (docs: published values; verified); threads, an end in between and a resumption change nothing.
 
 #include "cover/area_run.hpp"
 
@@ -8,6 +8,7 @@
 #include <numbers>
 
 #include "catch.hpp"
+#include "cover/area_assembly.hpp"
 #include "cover/temporary_folder.hpp"
 #include "kernel/component_list.hpp"
 #include "kernel/cover_sum.hpp"
@@ -27,7 +28,8 @@ AreaRequest request_of(unsigned depth, std::optional<int> resolution) {
   return request;
 }
 
-AreaRequest request_of(unsigned depth, const mpq_class& x_lo, const mpq_class& x_hi, const mpq_class& y_lo, const mpq_class& y_hi) {
+AreaRequest request_of(unsigned depth, const mpq_class& x_lo, const mpq_class& x_hi, const mpq_class& y_lo,
+                       const mpq_class& y_hi) {
   AreaRequest request = request_of(depth, std::nullopt);
   request.within = RationalBox{reference::to_rational({x_lo, y_lo}), reference::to_rational({x_hi, y_hi})};
   return request;
@@ -59,7 +61,8 @@ KernelBounds kernel_bounds(const AreaResult& result, const BlockStore& store) {
   const AreaCover& cover = *result.header.cover;
   const CoverRules rules = cover.plan.rules;
   REQUIRE_FALSE(check_reach(cover.plan.root, cover.mirrored, cover.within));
-  const auto trunk = establish_cover_block(cover.plan.root, rules, window_of(cover, cover.plan.root), result.trunk.block, {});
+  const auto trunk =
+      establish_cover_block(cover.plan.root, rules, window_of(cover, cover.plan.root), result.trunk.block, {});
   REQUIRE(trunk);
   CoverSum sum(cover.plan, cover.mirrored, cover.within, *trunk);
   for (const BlockPlace& place : result.trunk.places) {
@@ -94,13 +97,15 @@ TEST_CASE("all of M: the kernel proves the bounds of the header, on one thread a
   for (const unsigned depth : {6u, 9u, 11u}) {
     const TemporaryFolder one_folder, two_folder;
     BlockStore one_store = store_in(one_folder), two_store = store_in(two_folder);
-    const AreaResult one = result_of(request_of(depth, 4), 1, &one_store), two = result_of(request_of(depth, 4), 2, &two_store);
+    const AreaResult one = result_of(request_of(depth, 4), 1, &one_store),
+                     two = result_of(request_of(depth, 4), 2, &two_store);
     INFO("depth " << depth);
     CHECK(words(one.header) == words(two.header));
     CHECK(one.components == two.components);
     CHECK_FALSE(check_distinct(one.components));
     REQUIRE(one.trunk.places.size() == two.trunk.places.size());
-    for (const BlockPlace& place : one.trunk.places) REQUIRE(one_store.packed(place)->digest == two_store.packed(place)->digest);
+    for (const BlockPlace& place : one.trunk.places)
+      REQUIRE(one_store.packed(place)->digest == two_store.packed(place)->digest);
     check_bounds(one, one_store);
     const double at_most = exact(*one.header.at_most).get_d(), at_least = exact(*one.header.at_least).get_d();
     CHECK(at_most > kEstimate);
@@ -177,6 +182,31 @@ TEST_CASE("a run that is ended has no result, and one that resumes has the same 
   CHECK(words(again.header) == words(whole.header));
 }
 
+TEST_CASE(
+    "the certificate has one digest, whole or in outline, and on any threads; a folder that is not there is named") {
+  const nlohmann::json provenance = nlohmann::json::object();
+  std::vector<WrittenArea> written;
+  for (const unsigned threads : {1u, 2u}) {
+    const TemporaryFolder folder;
+    BlockStore store = store_in(folder);
+    const AreaResult result = result_of(request_of(9, 4), threads, &store);
+    for (const bool outline : {false, true}) {
+      const std::string path = (folder.path / (outline ? "outline.mere" : "whole.mere")).string();
+      const auto file = assemble_area(result, store, path, outline, provenance);
+      INFO((file ? "" : file.failure().message));
+      REQUIRE(file);
+      CHECK(std::filesystem::file_size(path) == file->bytes);
+      CHECK(file->blocks == 2 + result.trunk.places.size());  // the trunk and one list of components
+      written.push_back(*file);
+    }
+    const auto nowhere = assemble_area(result, store, (folder.path / "none" / "a.mere").string(), false, provenance);
+    REQUIRE_FALSE(nowhere);
+    CHECK(nowhere.failure().message.find("none/a.mere") != std::string::npos);
+  }
+  for (const WrittenArea& file : written) CHECK(file.digest == written[0].digest);
+  CHECK(written[1].bytes < written[0].bytes);
+}
+
 TEST_CASE("with next to no time a run ends all the same, at the least depth that there is") {
   for (const unsigned depth : {4u, 6u, 8u}) {
     AreaRequest request = request_of(depth, 4);
@@ -200,8 +230,9 @@ TEST_CASE("what is asked for in words of effort") {
   const std::string plain = described();
   CHECK(plain == described());
   for (const auto& change : std::initializer_list<void (*)(AreaRequest&)>{
-           [](AreaRequest& r) { r.depth = 7; }, [](AreaRequest& r) { r.seconds = 5; }, [](AreaRequest& r) { r.resolution = 5; },
-           [](AreaRequest& r) { r.resolution.reset(); }, [](AreaRequest& r) { r.rules = CoverRules::elementary; }}) {
+           [](AreaRequest& r) { r.depth = 7; }, [](AreaRequest& r) { r.seconds = 5; },
+           [](AreaRequest& r) { r.resolution = 5; }, [](AreaRequest& r) { r.resolution.reset(); },
+           [](AreaRequest& r) { r.rules = CoverRules::elementary; }}) {
     request = request_of(8, 4);
     change(request);
     CHECK(described() != plain);

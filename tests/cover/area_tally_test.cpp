@@ -42,7 +42,9 @@ TEST_CASE("blocks of several grades are added exactly, twice where conjugation d
 }
 
 TEST_CASE("of a box, the cells that it touches are kept") {
-  AreaCover cover{{{0, 0, 0, 0}, CoverRules::all}, false, RationalBox{{Rational(1, 4), Rational(1, 3)}, {Rational(1, 2), Rational(2, 3)}}};
+  AreaCover cover{{{0, 0, 0, 0}, CoverRules::all},
+                  false,
+                  RationalBox{{Rational(1, 4), Rational(1, 3)}, {Rational(1, 2), Rational(2, 3)}}};
   Trunk trunk;
   trunk.places.assign(1, {});
   AreaTally tally(cover, trunk);

@@ -19,7 +19,8 @@ std::vector<std::uint64_t> keys_of(const std::vector<BlockPlace>& places) {
   return keys;
 }
 
-std::map<std::uint64_t, FinishedBlock> blocks_of(const AreaCover& cover, const std::vector<BlockPlace>& places, unsigned depth, const RunnerOptions& options) {
+std::map<std::uint64_t, FinishedBlock> blocks_of(const AreaCover& cover, const std::vector<BlockPlace>& places,
+                                                 unsigned depth, const RunnerOptions& options) {
   DepthPolicy policy = DepthPolicy::fixed(depth);
   std::map<std::uint64_t, FinishedBlock> blocks;
   const auto failure = run_blocks(cover, places, policy, options, [&](FinishedBlock&& block) {
@@ -37,7 +38,8 @@ TEST_CASE("each place is searched once, and threads change nothing") {
   const std::vector<BlockPlace> places = search_trunk(cover).places;
   REQUIRE(places.size() > 30);
   for (const bool with_inside : {false, true}) {
-    const auto one = blocks_of(cover, places, 9, {1, with_inside}), two = blocks_of(cover, shuffled(places), 9, {2, with_inside});
+    const auto one = blocks_of(cover, places, 9, {1, with_inside}),
+               two = blocks_of(cover, shuffled(places), 9, {2, with_inside});
     REQUIRE(one.size() == places.size());
     REQUIRE(two.size() == places.size());
     for (const BlockPlace& place : places) {
@@ -61,7 +63,8 @@ TEST_CASE("when no more is wanted, no more is begun") {
   for (const unsigned threads : {1u, 2u}) {
     DepthPolicy policy = DepthPolicy::fixed(6);
     std::size_t taken = 0;
-    const auto failure = run_blocks(cover, places, policy, {threads, false}, [&](FinishedBlock&&) { return ++taken < 5; });
+    const auto failure =
+        run_blocks(cover, places, policy, {threads, false}, [&](FinishedBlock&&) { return ++taken < 5; });
     CHECK_FALSE(failure);
     CHECK(taken == 5);
   }
@@ -79,7 +82,8 @@ TEST_CASE("a shuffled list has the same places, in the same other order each tim
   std::sort(sorted.begin(), sorted.end());
   CHECK(sorted == keys_of(places));
   // every stretch is a fair sample: of the first hundred, about half are in the lower half
-  const auto low = std::count_if(order.begin(), order.begin() + 100, [](const BlockPlace& place) { return place.row < 12; });
+  const auto low =
+      std::count_if(order.begin(), order.begin() + 100, [](const BlockPlace& place) { return place.row < 12; });
   CHECK(low > 30);
   CHECK(low < 70);
   CHECK(shuffled({}).empty());

@@ -1,6 +1,6 @@
-// What a search marks, the kernel establishes, and as many cells of it; what it paints has no parameter in it that is known to be
-// on the other side: nuclei, Misiurewicz points (published), members by closed forms and on the real axis (exact), and MPFR's
-// orbits (computed).
+// What a search marks, the kernel establishes, and as many cells of it; what it paints has no parameter in it that is
+// known to be on the other side: nuclei, Misiurewicz points (published), members by closed forms and on the real axis
+// (exact), and MPFR's orbits (computed).
 
 #include "cover/block_search.hpp"
 
@@ -26,14 +26,21 @@ constexpr unsigned kDepth = 5, kCutTo = 3;
 constexpr std::uint32_t kGrade = kDepth + kCutTo;
 
 // Where a quarter of a large component, filaments, small components, the cusp, a tip, the outside, all of it are.
-const std::vector<CoverSquare> kSquares = {{-0.75, 0, -2, kGrade},      {-0.25, 0.75, -3, kGrade}, {-1.5, -0.125, -2, kGrade},
-                                           {0.1875, -0.0625, -3, kGrade}, {-2.0625, -0.0625, -3, kGrade}, {-0.5, 0.5, -1, kGrade},
-                                           {-2, 0, 1, kGrade},          {2, 2, 0, kGrade},         {-0.125, -0.125, -2, kGrade},
+const std::vector<CoverSquare> kSquares = {{-0.75, 0, -2, kGrade},
+                                           {-0.25, 0.75, -3, kGrade},
+                                           {-1.5, -0.125, -2, kGrade},
+                                           {0.1875, -0.0625, -3, kGrade},
+                                           {-2.0625, -0.0625, -3, kGrade},
+                                           {-0.5, 0.5, -1, kGrade},
+                                           {-2, 0, 1, kGrade},
+                                           {2, 2, 0, kGrade},
+                                           {-0.125, -0.125, -2, kGrade},
                                            {-1.76171875, -0.0078125, -6, kGrade}};
 
 CoverEffort effort_of(CoverRules rules, bool with_inside) { return {kDepth, kCutTo, 1000, rules, with_inside}; }
 
-CoverProof established(const CoverSquare& square, CoverRules rules, const CoverWindow& window, const CoverBlock& block) {
+CoverProof established(const CoverSquare& square, CoverRules rules, const CoverWindow& window,
+                       const CoverBlock& block) {
   const auto proof = establish_cover_block(square, rules, window, block, {});
   INFO((proof ? "" : proof.failure().message));
   REQUIRE(proof);
@@ -42,7 +49,9 @@ CoverProof established(const CoverSquare& square, CoverRules rules, const CoverW
 
 // Is a cell painted in which the parameter lies, edges included?
 bool is_painted_at(const Canvas& canvas, const CoverSquare& square, const Complex& c) {
-  const auto column = [&](const mpq_class& at, double corner) { return mpq_class((at - mpq_class(corner)) * power_of_two(static_cast<long>(square.grade) - square.side_exponent)); };
+  const auto column = [&](const mpq_class& at, double corner) {
+    return mpq_class((at - mpq_class(corner)) * power_of_two(static_cast<long>(square.grade) - square.side_exponent));
+  };
   const mpq_class x = column(c.re, square.x), y = column(c.im, square.y);
   for (std::uint32_t i = 0; i < canvas.side(); ++i)
     for (std::uint32_t k = 0; k < canvas.side() && x >= i && x <= i + 1; ++k)
@@ -71,8 +80,10 @@ std::vector<Complex> known_members(PointSource& source) {
 void check_corners(PointSource& source, const CoverSquare& square, const BlockFindings& found) {
   const mpq_class cell = power_of_two(square.side_exponent - static_cast<long>(square.grade));
   for (std::uint64_t k = 0; k < reference::repeats(40); ++k) {
-    const auto column = static_cast<std::uint32_t>(source.below(1u << square.grade)), row = static_cast<std::uint32_t>(source.below(1u << square.grade));
-    const Complex corner{mpq_class(square.x) + cell * (column + source.below(2)), mpq_class(square.y) + cell * (row + source.below(2))};
+    const auto column = static_cast<std::uint32_t>(source.below(1u << square.grade)),
+               row = static_cast<std::uint32_t>(source.below(1u << square.grade));
+    const Complex corner{mpq_class(square.x) + cell * (column + source.below(2)),
+                         mpq_class(square.y) + cell * (row + source.below(2))};
     INFO("at " << corner.re.get_d() << ", " << corner.im.get_d());
     if (found.outside.is_painted(column, row)) REQUIRE(reference::escape_index(corner, 2, 50'000));
     if (found.inside.is_painted(column, row)) REQUIRE_FALSE(reference::escape_index(corner, 2, 2'000));
@@ -107,7 +118,8 @@ TEST_CASE("the same square gives the same marks, with the inside recorded or not
   for (const CoverRules rules : {CoverRules::all, CoverRules::elementary})
     for (const CoverSquare& square : kSquares) {
       const CoverWindow window = whole_window(square);
-      const CoverBlock with = search_block(square, window, effort_of(rules, true)).block, without = search_block(square, window, effort_of(rules, false)).block;
+      const CoverBlock with = search_block(square, window, effort_of(rules, true)).block,
+                       without = search_block(square, window, effort_of(rules, false)).block;
       CHECK(with == search_block(square, window, effort_of(rules, true)).block);
       CHECK(without == search_block(square, window, effort_of(rules, false)).block);
       // the last depth's cells inside change nothing outside
@@ -141,12 +153,14 @@ TEST_CASE("in the window of a box, the counts are of its cells, and nothing beyo
   for (std::uint64_t k = 0; k < reference::repeats(30); ++k) {
     const CoverSquare& square = source.pick(kSquares);
     const mpq_class side = power_of_two(square.side_exponent);
-    const mpq_class x = mpq_class(square.x) + side * source.between(-20, 80) / 99, y = mpq_class(square.y) + side * source.between(-20, 80) / 99;
+    const mpq_class x = mpq_class(square.x) + side * source.between(-20, 80) / 99,
+                    y = mpq_class(square.y) + side * source.between(-20, 80) / 99;
     const mpq_class width = side * source.between(1, 99) / 97, height = side * source.between(1, 99) / 97;
     const RationalBox within{reference::to_rational({x, y}), reference::to_rational({x + width, y + height})};
     const CoverWindow window = window_of(square, within);
     const CoverRules rules = source.one_in(3) ? CoverRules::elementary : CoverRules::all;
-    const BlockFindings found = search_block(square, window, effort_of(rules, true)), whole = search_block(square, whole_window(square), effort_of(rules, true));
+    const BlockFindings found = search_block(square, window, effort_of(rules, true)),
+                        whole = search_block(square, whole_window(square), effort_of(rules, true));
     const CoverProof proof = established(square, rules, window, found.block);
     CHECK(found.block.outside_cells == found.outside.painted_in(window.touching));
     CHECK(found.block.inside_cells == found.inside.painted_in(window.within));

@@ -28,12 +28,13 @@ CoverBlock block_at(const BlockPlace& place) {
   CoverBlock block;
   block.column = place.column, block.row = place.row, block.grade = 5;
   block.outside = {3, 0x10}, block.inside = {1}, block.inside_by = {{3, -0.5, place.row / 8192.0, 0x1p-20}};
-  block.outside_cells = 100 + place.column, block.inside_cells = 7;
+  block.outside_cells = 100 + place.column % 100, block.inside_cells = 7;
   return block;
 }
 
 void put(BlockStore& store, const BlockPlace& place) {
   const auto packed = pack_cover_block(block_at(place));
+  INFO((packed ? "" : packed.failure().message));
   REQUIRE(packed);
   REQUIRE_FALSE(store.put(place, *packed));
 }
@@ -42,7 +43,8 @@ void put(BlockStore& store, const BlockPlace& place) {
 std::vector<Component> many_components(std::size_t count) {
   std::vector<Component> list;
   for (std::size_t k = 0; k < count; ++k)
-    list.push_back({static_cast<std::uint32_t>(1 + k % 900), -2 + static_cast<double>(k) / 8192, 0.5, -50, static_cast<std::uint16_t>(4 + k % 60), 64});
+    list.push_back({static_cast<std::uint32_t>(1 + k % 900), -2 + static_cast<double>(k) / 8192, 0.5, -50,
+                    static_cast<std::uint16_t>(4 + k % 60), 64});
   return list;
 }
 
@@ -75,7 +77,8 @@ TEST_CASE("blocks are found again by their places, by the run that resumes too")
 }
 
 TEST_CASE("a list of components is there as a whole or not at all") {
-  for (const std::size_t count : {std::size_t{1}, kComponentsOfBlock, kComponentsOfBlock + 1, 3 * kComponentsOfBlock - 5}) {
+  for (const std::size_t count :
+       {std::size_t{1}, kComponentsOfBlock, kComponentsOfBlock + 1, 3 * kComponentsOfBlock - 5}) {
     const TemporaryFolder folder;
     const std::vector<Component> list = many_components(count);
     BlockStore store = created(folder);
@@ -123,5 +126,6 @@ TEST_CASE("the blocks of a list have all of it, in order, and the first failure 
   REQUIRE(problem);
   CHECK(problem->message == "no room");
   CHECK(calls == 1);
-  CHECK_FALSE(for_each_component_block({}, [](const PackedBlock&) -> std::optional<Failure> { return Failure{"none to take"}; }));
+  CHECK_FALSE(for_each_component_block(
+      {}, [](const PackedBlock&) -> std::optional<Failure> { return Failure{"none to take"}; }));
 }

@@ -1,5 +1,5 @@
-// Trees of marked cells: the kernel reads back what was marked, and a writer that follows the text of cover.hpp alone gives the
-// same bytes. Middles of cells against GMP (computed).
+// Trees of marked cells: the kernel reads back what was marked, and a writer that follows the text of cover.hpp alone
+// gives the same bytes. Middles of cells against GMP (computed).
 
 #include "cover/cover_cells.hpp"
 
@@ -40,7 +40,8 @@ MarkedCells any_marks(PointSource& source) {
   for (std::size_t depth = 0; depth < marked.size(); ++depth) {
     std::set<std::uint32_t> orders;
     const std::uint64_t count = source.one_in(3) ? 0 : source.below(source.one_in(4) ? 300 : 6);
-    for (std::uint64_t n = 0; n < count; ++n) orders.insert(static_cast<std::uint32_t>(source.below(1u << (2 * depth))));
+    for (std::uint64_t n = 0; n < count; ++n)
+      orders.insert(static_cast<std::uint32_t>(source.below(1u << (2 * depth))));
     marked[depth].assign(orders.begin(), orders.end());
   }
   return marked;
@@ -96,11 +97,14 @@ TEST_CASE("middles of cells and lengths in fine cells are exact") {
   for (std::uint64_t k = 0; k < reference::repeats(500); ++k) {
     const auto side = static_cast<std::int32_t>(source.between(-30, 3));
     const auto grade = static_cast<std::uint32_t>(source.between(0, 13));
-    const double unit = std::ldexp(1.0, side), x = unit * static_cast<double>(source.between(-50, 50)) / 16, y = unit * static_cast<double>(source.between(-50, 50)) / 16;
+    const double unit = std::ldexp(1.0, side), x = unit * static_cast<double>(source.between(-50, 50)) / 16,
+                 y = unit * static_cast<double>(source.between(-50, 50)) / 16;
     const CoverGeometry geometry({x, y, side, grade});
     const auto depth = static_cast<std::uint32_t>(source.below(grade + 1));
-    const CoverCell cell{0, static_cast<std::uint32_t>(source.below(1u << depth)), static_cast<std::uint32_t>(source.below(1u << depth))};
-    const mpq_class half = reference::power_of_two(side - static_cast<long>(depth) - 1), fine = reference::power_of_two(side - static_cast<long>(grade));
+    const CoverCell cell{0, static_cast<std::uint32_t>(source.below(1u << depth)),
+                         static_cast<std::uint32_t>(source.below(1u << depth))};
+    const mpq_class half = reference::power_of_two(side - static_cast<long>(depth) - 1),
+                    fine = reference::power_of_two(side - static_cast<long>(grade));
     REQUIRE(mpq_class(geometry.x(cell, depth)) == mpq_class(x) + (2 * cell.column + 1) * half);
     REQUIRE(mpq_class(geometry.y(cell, depth)) == mpq_class(y) + (2 * cell.row + 1) * half);
     REQUIRE(mpq_class(geometry.side(depth)) == 2 * half);

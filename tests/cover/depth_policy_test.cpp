@@ -1,5 +1,5 @@
-// How deep the next block goes: never beyond what is allowed, as deep as the time allows by the policy's own rule, and by what
-// blocks took. Limits lie so far from what is asked that the time that the test takes does not matter.
+// How deep the next block goes: never beyond what is allowed, as deep as the time allows by the policy's own rule, and
+// by what blocks took. Limits lie so far from what is asked that the time that the test takes does not matter.
 
 #include "cover/depth_policy.hpp"
 

@@ -1,5 +1,5 @@
-// The root contains what is asked for (GMP, computed), its blocks are squares that the kernel takes, and each fine cell of the
-// trunk is decided, as the kernel establishes it, or a block's place.
+// The root contains what is asked for (GMP, computed), its blocks are squares that the kernel takes, and each fine cell
+// of the trunk is decided, as the kernel establishes it, or a block's place.
 
 #include "cover/trunk.hpp"
 
@@ -39,14 +39,16 @@ std::size_t check_trunk(const AreaCover& cover) {
   const CoverProof proof = established(cover, trunk);
   CHECK(trunk.block.grade == cover.plan.root.grade);
   CHECK(proof.figures.fallbacks == 0);
-  CHECK(std::is_sorted(trunk.places.begin(), trunk.places.end(), [](const auto& a, const auto& b) { return a.key() < b.key(); }));
+  CHECK(std::is_sorted(trunk.places.begin(), trunk.places.end(),
+                       [](const auto& a, const auto& b) { return a.key() < b.key(); }));
   CoverSum sum(cover.plan, cover.mirrored, cover.within, proof);
   std::size_t added = 0;
   for (const BlockPlace& place : trunk.places) {
     if (added + 1 == trunk.places.size()) {  // without the last, it is incomplete
       const auto missing = sum.finish();
       REQUIRE(missing);
-      CHECK(missing->message.find("column " + std::to_string(place.column) + ", row " + std::to_string(place.row)) == 0);
+      CHECK(missing->message.find("column " + std::to_string(place.column) + ", row " + std::to_string(place.row)) ==
+            0);
     }
     CoverBlock block;
     block.column = place.column, block.row = place.row, block.grade = 3;
@@ -63,7 +65,7 @@ std::size_t check_trunk(const AreaCover& cover) {
 
 TEST_CASE("the root of a box contains it, is not much larger, and can be cut to the last block") {
   PointSource source(9401);
-  std::uint64_t taken = 0, refused = 0;
+  std::uint64_t taken = 0, cut = 0, refused = 0;
   for (std::uint64_t k = 0; k < reference::repeats(3'000); ++k) {
     const long scale = source.between(-44, 2);
     const auto third = [&] { return mpq_class(ratio(source.between(1, 3'000), 3'000) * power_of_two(scale)); };
@@ -71,7 +73,8 @@ TEST_CASE("the root of a box contains it, is not much larger, and can be cut to 
     // anywhere, at the ends of what is allowed, or on the grid but for a little
     mpq_class x = source.uniform(-4, 4, 60), y = source.uniform(-4, 4, 70) * ratio(1, 3);
     if (source.one_in(4)) x = source.one_in(2) ? mpq_class(-4) : mpq_class(4 - width);
-    if (source.one_in(4)) y = mpq_class(source.between(-64, 60)) / 16 - (source.one_in(2) ? power_of_two(-200) : mpq_class(0));
+    if (source.one_in(4))
+      y = mpq_class(source.between(-64, 60)) / 16 - (source.one_in(2) ? power_of_two(-200) : mpq_class(0));
     if (x + width > 4 || y + height > 4 || y < -4) continue;
     const auto depth = static_cast<unsigned>(source.between(kSmallestDepth, kLargestDepth));
     const RationalBox box = box_of(x, y, width, height);
@@ -84,13 +87,18 @@ TEST_CASE("the root of a box contains it, is not much larger, and can be cut to 
     ++taken;
     const CoverSquare& root = cover->plan.root;
     const mpq_class side = power_of_two(root.side_exponent);
-    INFO(std::hexfloat << "root at " << root.x << ", " << root.y << " of side 2^" << root.side_exponent << ", depth " << depth);
+    INFO(std::hexfloat << "root at " << root.x << ", " << root.y << " of side 2^" << root.side_exponent << ", depth "
+                       << depth);
     REQUIRE(mpq_class(root.x) <= x);
     REQUIRE(x + width <= mpq_class(root.x) + side);
     REQUIRE(mpq_class(root.y) <= y);
     REQUIRE(y + height <= mpq_class(root.y) + side);
     REQUIRE_FALSE(check_reach(root, cover->mirrored, cover->within));
     REQUIRE(side < 4 * std::max(width, height));
+    // at the rim of what is allowed, far from M, tiny squares have middles that are no doubles, and are refused by the
+    // kernel
+    if (std::max(abs(x), abs(y)) + side > ratio(39, 10)) continue;
+    ++cut;
     const std::uint32_t grade = depth - root.grade + kCut;
     const CellRange range = window_of(*cover, root).touching;
     REQUIRE(range.cells() > 0);
@@ -99,6 +107,7 @@ TEST_CASE("the root of a box contains it, is not much larger, and can be cut to 
     REQUIRE(MarkedSquare::of(root));
   }
   CHECK(taken > reference::repeats(3'000) / 4);
+  CHECK(cut > taken / 2);
   CHECK(refused > reference::repeats(3'000) / 50);
 }
 
@@ -123,8 +132,10 @@ TEST_CASE("of a box: each fine cell of the trunk that it touches is decided or a
   PointSource source(9402);
   for (std::uint64_t k = 0; k < reference::repeats(25); ++k) {
     const mpq_class width = ratio(source.between(1, 99), 100) * power_of_two(-source.between(0, 6));
-    const RationalBox box = box_of(source.uniform(-2, ratio(1, 2), 40), source.uniform(-1, 1, 40), width, width * ratio(source.between(1, 30), 20));
-    const auto cover = cover_of_box(box, source.one_in(4) ? CoverRules::elementary : CoverRules::all, static_cast<unsigned>(source.between(4, 13)));
+    const RationalBox box = box_of(source.uniform(-2, ratio(1, 2), 40), source.uniform(-1, 1, 40), width,
+                                   width * ratio(source.between(1, 30), 20));
+    const auto cover = cover_of_box(box, source.one_in(4) ? CoverRules::elementary : CoverRules::all,
+                                    static_cast<unsigned>(source.between(4, 13)));
     REQUIRE(cover);
     INFO("box " << k);
     check_trunk(*cover);

@@ -1,4 +1,5 @@
-// The area that the blocks of a cover leave, and what must be there: sums by GMP (computed), gaps, doubles and reach by hand.
+// The area that the blocks of a cover leave, and what must be there: sums by GMP (computed), gaps, doubles and reach by
+// hand.
 
 #include "kernel/cover_sum.hpp"
 
@@ -43,7 +44,9 @@ CoverSum sum_of(const TrunkCells& cells, bool mirrored = false) {
   return {kPlan, mirrored, std::nullopt, trunk_of(kPlan, cells, whole_window(kPlan.root))};
 }
 
-RationalBox box(const Rational& x_lo, const Rational& y_lo, const Rational& x_hi, const Rational& y_hi) { return {{x_lo, y_lo}, {x_hi, y_hi}}; }
+RationalBox box(const Rational& x_lo, const Rational& y_lo, const Rational& x_hi, const Rational& y_hi) {
+  return {{x_lo, y_lo}, {x_hi, y_hi}};
+}
 
 }  // namespace
 
@@ -53,9 +56,11 @@ TEST_CASE("what blocks leave and show is added exactly, in any order, and double
     const bool mirrored = source.one_in(2);
     CoverSum sum = sum_of({{{0, 1}}, {{1, 0}}}, mirrored);
     mpq_class kept = 4, inside = 4;
-    for (const std::uint32_t row : source.one_in(2) ? std::vector<std::uint32_t>{0, 1} : std::vector<std::uint32_t>{1, 0}) {
+    for (const std::uint32_t row :
+         source.one_in(2) ? std::vector<std::uint32_t>{0, 1} : std::vector<std::uint32_t>{1, 0}) {
       const auto grade = static_cast<std::uint32_t>(source.between(0, 13));
-      const std::uint64_t cells = std::uint64_t{1} << (2 * grade), out = source.below(cells + 1), in = source.below(cells - out + 1);
+      const std::uint64_t cells = std::uint64_t{1} << (2 * grade), out = source.below(cells + 1),
+                          in = source.below(cells - out + 1);
       CHECK(sum.finish());
       REQUIRE_FALSE(sum.add(block_at(row, row, grade), out, in));
       const mpq_class cell = power_of_two(2 - 2 * static_cast<long>(grade));
@@ -93,8 +98,10 @@ TEST_CASE("a block where the trunk decides adds nothing, and may stand there onc
 
 TEST_CASE("more cells than there are, as a block that is absent may claim them, are refused") {
   CoverSum whole = sum_of({});
-  CHECK_THAT(words(whole.add(block_at(0, 0, 2), 17, 0)), StartsWith("column 0, row 0 of the trunk: of its block more cells are claimed"));
-  CHECK_THAT(words(whole.add(block_at(0, 1, 2), 0, 17)), Contains("more cells are claimed outside or inside than count there"));
+  CHECK_THAT(words(whole.add(block_at(0, 0, 2), 17, 0)),
+             StartsWith("column 0, row 0 of the trunk: of its block more cells are claimed"));
+  CHECK_THAT(words(whole.add(block_at(0, 1, 2), 0, 17)),
+             Contains("more cells are claimed outside or inside than count there"));
   CHECK(words(whole.add(block_at(1, 0, 2), 16, 0)) == "none");
   const RationalBox half = box(-2, 0, -1, 2);  // half of the cell in column 0, row 0
   const CoverWindow window = window_of(kPlan.root, half);
@@ -121,7 +128,8 @@ TEST_CASE("of a box, trunk cells inside decide only where they lie in it") {
 }
 
 TEST_CASE("a root must reach as far as what the bound is about") {
-  const auto reach = [](double x, double y, std::int32_t side, bool mirrored, const std::optional<RationalBox>& within) {
+  const auto reach = [](double x, double y, std::int32_t side, bool mirrored,
+                        const std::optional<RationalBox>& within) {
     return words(check_reach({x, y, side, 4}, mirrored, within));
   };
   CHECK(reach(-2, 0, 2, true, {}) == "none");

@@ -43,11 +43,14 @@ TEST_CASE("a cell is in the window when it meets the box in more than a line, an
   for (std::uint64_t k = 0; k < reference::repeats(3'000); ++k) {
     const auto grade = static_cast<std::uint32_t>(source.between(0, 3));
     const auto side = static_cast<std::int32_t>(source.between(-40, 3));
-    const CoverSquare square{std::ldexp(static_cast<double>(source.between(-9, 9)), side - 1), std::ldexp(static_cast<double>(source.between(-9, 9)), side - 2), side, grade};
+    const CoverSquare square{std::ldexp(static_cast<double>(source.between(-9, 9)), side - 1),
+                             std::ldexp(static_cast<double>(source.between(-9, 9)), side - 2), side, grade};
     const mpq_class cell = power_of_two(side - static_cast<long>(grade));
-    const Sides columns{mpq_class(square.x), mpq_class(square.x) + power_of_two(side)}, rows{mpq_class(square.y), mpq_class(square.y) + power_of_two(side)};
+    const Sides columns{mpq_class(square.x), mpq_class(square.x) + power_of_two(side)},
+        rows{mpq_class(square.y), mpq_class(square.y) + power_of_two(side)};
     const Sides x = any_sides(source, columns, cell), y = any_sides(source, rows, cell);
-    const CoverWindow window = window_of(square, {reference::to_rational({x.lo, y.lo}), reference::to_rational({x.hi, y.hi})});
+    const CoverWindow window =
+        window_of(square, {reference::to_rational({x.lo, y.lo}), reference::to_rational({x.hi, y.hi})});
     INFO("grade " << grade << ", box from " << x.lo << ", " << y.lo << " to " << x.hi << ", " << y.hi);
     const auto meets = [&](const Sides& box, const mpq_class& lo) { return box.lo < lo + cell && box.hi > lo; };
     const auto holds = [&](const Sides& box, const mpq_class& lo) { return box.lo <= lo && box.hi >= lo + cell; };

@@ -1,8 +1,8 @@
-"""Broken lanes of many exterior discs, sums and windows of covers, and their search (E9, E7, U1, I3, A1). See mutants.py for
-the form.
+"""Broken lanes of many exterior discs, sums and windows of covers, and their search (E9, E7, U1, I3, A1). See
+mutants.py for the form.
 
-Not here, since what they take away is slack: the box in which a disc must lie for the cardioid's test (far out the bend alone
-forbids it), rounding terms of the read-off beside the errors of the orbit."""
+Not here, since what they take away is slack: the box in which a disc must lie for the cardioid's test (far out the bend
+alone forbids it), rounding terms of the read-off beside the errors of the orbit."""
 
 MUTANTS = {
     "lanes/jet_lanes-inl.hpp": [

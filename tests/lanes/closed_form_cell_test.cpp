@@ -21,7 +21,9 @@ bool is_inside(const Complex& c, int period) {
 
 bool holds_on_rim(const DoubleCircle& disc, int period) {
   const Complex centre = doubles::exact(disc.x, disc.y);
-  const auto holds = [&](const Complex& unit) { return is_inside(centre + doubles::exact(disc.radius) * unit, period); };
+  const auto holds = [&](const Complex& unit) {
+    return is_inside(centre + doubles::exact(disc.radius) * unit, period);
+  };
   for (const Complex& unit : reference::unit_directions())
     if (!holds(unit)) return false;
   for (long k = -8; k <= 8; ++k)
@@ -47,7 +49,8 @@ TEST_CASE("a disc that is said to be inside is: at random, touching the curve fr
     const int period = source.one_in(3) ? 2 : 1;
     const double radius = std::abs(doubles::any_double(source, source.between(-40, -2)));
     // the curve is about so many radii away, a little less or more
-    const mpq_class away = doubles::exact(radius) * (1 + source.between(-4, 24) * power_of_two(-source.between(0, 20))) * (period == 2 ? 4 : 2);
+    const mpq_class away = doubles::exact(radius) *
+                           (1 + source.between(-4, 24) * power_of_two(-source.between(0, 20))) * (period == 2 ? 4 : 2);
     const DoubleCircle disc = disc_at(with_multiplier((1 - away) * source.direction(), period), radius);
     const bool answer = lies_in_closed_form(disc), truth = holds_on_rim(disc, 1) || holds_on_rim(disc, 2);
     INFO(std::hexfloat << "disc about " << disc.x << ", " << disc.y << " of radius " << disc.radius);
@@ -91,9 +94,21 @@ TEST_CASE("points: the answer is that of the exact polynomials but for those wit
 }
 
 TEST_CASE("on the curves, across them, far out and for numbers that are none the answer is no") {
-  for (const DoubleCircle& disc : {DoubleCircle{0.25, 0, 0}, {-0.75, 0, 0}, {-1.25, 0, 0}, {0.25, 0, 0x1p-30}, {-1, 0, 0.25},
-                                   {-1, 0, 0.2500001}, {0, 0, 0.2500001}, {0, 0, 1}, {0, 0, 100}, {0.1, 0, 0.2},
-                                   {-0.75, 0, 0x1p-20}, {-2, 0, 0}, {0, 1, 0}, {3, 3, 0.5}, {0.25, 0x1p-1074, 0}})
+  for (const DoubleCircle& disc : {DoubleCircle{0.25, 0, 0},
+                                   {-0.75, 0, 0},
+                                   {-1.25, 0, 0},
+                                   {0.25, 0, 0x1p-30},
+                                   {-1, 0, 0.25},
+                                   {-1, 0, 0.2500001},
+                                   {0, 0, 0.2500001},
+                                   {0, 0, 1},
+                                   {0, 0, 100},
+                                   {0.1, 0, 0.2},
+                                   {-0.75, 0, 0x1p-20},
+                                   {-2, 0, 0},
+                                   {0, 1, 0},
+                                   {3, 3, 0.5},
+                                   {0.25, 0x1p-1074, 0}})
     CHECK_FALSE(lies_in_closed_form(disc));
   const double nan = std::nan(""), infinity = HUGE_VAL;
   for (const double bad : {nan, infinity, -infinity})

@@ -1,5 +1,6 @@
-// Lemmas E3 and E9 for many parameters at once. The truth comes from the kernel's discs in Arb, from MPFR's derivatives far
-// beyond the index used, from MPFR's iteration at points of the rim (computed), and from members that are known exactly.
+// Lemmas E3 and E9 for many parameters at once. The truth comes from the kernel's discs in Arb, from MPFR's derivatives
+// far beyond the index used, from MPFR's iteration at points of the rim (computed), and from members that are known
+// exactly.
 
 #include "lanes/exterior_batch.hpp"
 
@@ -37,7 +38,8 @@ std::vector<ExteriorMark> marks_of(const std::vector<DoublePoint>& points, const
 
 ExteriorMark mark_of(double x, double y, const OrbitLimits& limits = kFar) { return marks_of({{x, y}}, limits)[0]; }
 
-// Near the boundary at many distances; every eighth beside the cusp or where two components meet, where orbits are long.
+// Near the boundary at many distances; every eighth beside the cusp or where two components meet, where orbits are
+// long.
 std::vector<DoublePoint> many_points(PointSource& source, std::uint64_t count) {
   std::vector<DoublePoint> points;
   while (points.size() < count) {
@@ -134,7 +136,8 @@ TEST_CASE("points at 0.999 of the radius escape") {
 TEST_CASE("a member never has a disc") {
   PointSource source(9104);
   // preperiodic (-2, i, -i), parabolic (1/4, -3/4, -5/4, -7/4), nuclei 0 and -1: exactly
-  std::vector<DoublePoint> members = {{-2, 0}, {0, 1}, {0, -1}, {0.25, 0}, {-0.75, 0}, {-1.25, 0}, {-1.75, 0}, {0, 0}, {-1, 0}};
+  std::vector<DoublePoint> members = {{-2, 0},    {0, 1},     {0, -1}, {0.25, 0}, {-0.75, 0},
+                                      {-1.25, 0}, {-1.75, 0}, {0, 0},  {-1, 0}};
   for (const auto& nucleus : reference::nuclei())  // the double is in the component: its radius is far above 2^-50
     members.push_back({reference::decimal(nucleus.re).get_d(), reference::decimal(nucleus.im).get_d()});
   while (members.size() < 2'000) {  // of a multiplier up to 1 - 2^-40
@@ -152,7 +155,8 @@ TEST_CASE("a member never has a disc") {
   const std::vector<DoublePoint> points = many_points(source, reference::repeats(3'000));
   for (const ExteriorMark& mark : marks_of(points)) {
     if (mark.end != End::proved) continue;
-    INFO(std::hexfloat << "disc about " << mark.circle.x << ", " << mark.circle.y << " of radius " << mark.circle.radius);
+    INFO(std::hexfloat << "disc about " << mark.circle.x << ", " << mark.circle.y << " of radius "
+                       << mark.circle.radius);
     for (std::size_t k = 0; k < 9; ++k)
       REQUIRE(norm(exact(mark.circle.x - members[k].x, mark.circle.y - members[k].y)) >
               exact(mark.circle.radius) * exact(mark.circle.radius));
@@ -177,10 +181,12 @@ TEST_CASE("every width of lanes, every order and all neighbours give the same bi
       REQUIRE(same_bits(marks_of(points, limits), expected));
       for (std::size_t n = order.size(); n > 1; --n) std::swap(order[n - 1], order[source.below(n)]);
       for (std::size_t first = 0; first < order.size();) {
-        const std::size_t size = std::min<std::size_t>(order.size() - first, 1 + source.below(source.one_in(2) ? 9 : 300));
+        const std::size_t size =
+            std::min<std::size_t>(order.size() - first, 1 + source.below(source.one_in(2) ? 9 : 300));
         std::vector<DoublePoint> some;
         std::vector<ExteriorMark> wanted;
-        for (std::size_t i = first; i < first + size; ++i) some.push_back(points[order[i]]), wanted.push_back(expected[order[i]]);
+        for (std::size_t i = first; i < first + size; ++i)
+          some.push_back(points[order[i]]), wanted.push_back(expected[order[i]]);
         REQUIRE(same_bits(marks_of(some, limits), wanted));
         first += size;
       }
@@ -230,10 +236,12 @@ TEST_CASE("an orbit is given up only when its disc is below five times what is a
 TEST_CASE("nothing, parameters far out and numbers that underflow end without a number that is none") {
   exterior_discs({}, kFar, {});
   std::vector<DoublePoint> points;
-  const std::vector<double> parts = {0.0, -0.0, 0x1p-1074, -0x1p-1022, 0x1p-600, 0x1p-60, 0.25, -1.25, 1.75, -2.0, 2.09, 2.2, 3.0, 4.0, -4.0};
+  const std::vector<double> parts = {0.0,  -0.0, 0x1p-1074, -0x1p-1022, 0x1p-600, 0x1p-60, 0.25, -1.25,
+                                     1.75, -2.0, 2.09,      2.2,        3.0,      4.0,     -4.0};
   for (const double x : parts)
     for (const double y : parts) points.push_back({x, y});
-  for (const OrbitLimits& limits : {OrbitLimits{2'000, 0}, OrbitLimits{2'000, 0x1p-1070}, OrbitLimits{7, 8.0}, OrbitLimits{2'000, 0x1p-30}}) {
+  for (const OrbitLimits& limits :
+       {OrbitLimits{2'000, 0}, OrbitLimits{2'000, 0x1p-1070}, OrbitLimits{7, 8.0}, OrbitLimits{2'000, 0x1p-30}}) {
     const std::vector<ExteriorMark> marks = marks_of(points, limits);
     for (std::size_t k = 0; k < points.size(); ++k) {
       const auto& [circle, end] = marks[k];

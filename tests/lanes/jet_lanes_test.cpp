@@ -1,6 +1,6 @@
-// The step of an orbit with squares of errors (Lemma E9), its logarithm and tangent (Lemma E7), in the scalar instance of the
-// lanes: against exact steps in GMP, against MPFR's derivatives at 400 bits, and against the lanes that the library runs
-// (computed).
+// The step of an orbit with squares of errors (Lemma E9), its logarithm and tangent (Lemma E7), in the scalar instance
+// of the lanes: against exact steps in GMP, against MPFR's derivatives at 400 bits, and against the lanes that the
+// library runs (computed).
 
 #define HWY_COMPILE_ONLY_SCALAR
 #include "lanes/jet_lanes-inl.hpp"
@@ -49,7 +49,8 @@ struct Shares {
 };
 
 // The exact step of z, z', z'' as differentiation gives it, from true values at the ends of their errors.
-void check_step(const Jet& jet, const std::array<double, 3>& errors, const std::array<Complex, 3>& units, Shares& most) {
+void check_step(const Jet& jet, const std::array<double, 3>& errors, const std::array<Complex, 3>& units,
+                Shares& most) {
   const Complex c = exact(value(jet.cx), value(jet.cy));
   const Complex z = z_of(jet) + exact(errors[0]) * units[0], a = first_of(jet) + exact(errors[1]) * units[1],
                 b = second_of(jet) + exact(errors[2]) * units[2];
@@ -80,11 +81,12 @@ Trial any_trial(PointSource& source, unsigned with_errors) {
   for (std::size_t k = 0; k < 3; ++k) {
     const long size = k == 0 ? out : k == 1 ? scale : scale2;
     if ((with_errors >> k & 1) != 0)
-      e[k] = std::ldexp(static_cast<double>(source.between(1 << 25, 1 << 26)), static_cast<int>(source.between(-84, -27) + size));
+      e[k] = std::ldexp(static_cast<double>(source.between(1 << 25, 1 << 26)),
+                        static_cast<int>(source.between(-84, -27) + size));
   }
   const double x = scaled(source, -1), y = scaled(source, -1);
-  return {{scaled(source, out), scaled(source, out), scaled(source, scale), scaled(source, scale), scaled(source, scale2),
-           scaled(source, scale2), e[0] * e[0], e[1] * e[1], e[2] * e[2], x, y},
+  return {{scaled(source, out), scaled(source, out), scaled(source, scale), scaled(source, scale),
+           scaled(source, scale2), scaled(source, scale2), e[0] * e[0], e[1] * e[1], e[2] * e[2], x, y},
           e};
 }
 
@@ -98,7 +100,8 @@ Complex unit_along(double x, double y) {
 
 // The error of each part along the part itself, where it is stretched most.
 std::array<Complex, 3> along(const Jet& j) {
-  return {unit_along(value(j.zx), value(j.zy)), unit_along(value(j.ax), value(j.ay)), unit_along(value(j.bx), value(j.by))};
+  return {unit_along(value(j.zx), value(j.zy)), unit_along(value(j.ax), value(j.ay)),
+          unit_along(value(j.bx), value(j.by))};
 }
 
 mpfr_prec_t bits_of(std::uint64_t n) { return static_cast<mpfr_prec_t>(400 + 3 * n); }
@@ -125,7 +128,8 @@ TEST_CASE("a step of the lanes from values known up to errors holds for every tr
     const Trial trial = any_trial(source, static_cast<unsigned>(source.between(1, 7)));
     const bool is_worst = source.one_in(2);
     check_step(trial.jet, trial.errors,
-               is_worst ? along(trial.jet) : std::array{source.direction(), source.direction(), source.direction()}, most);
+               is_worst ? along(trial.jet) : std::array{source.direction(), source.direction(), source.direction()},
+               most);
   }
   CHECK(most.z > 0.95);
   CHECK(most.first > 0.95);
@@ -139,7 +143,9 @@ TEST_CASE("errors as large as the values are covered") {
     Trial trial = any_trial(source, 0);
     for (double& error : trial.errors)
       error = std::ldexp(static_cast<double>(source.between(1, 255)), static_cast<int>(source.between(-12, 30)));
-    const auto squared = [&](int i) { return Number(trial.errors[static_cast<std::size_t>(i)] * trial.errors[static_cast<std::size_t>(i)]); };
+    const auto squared = [&](int i) {
+      return Number(trial.errors[static_cast<std::size_t>(i)] * trial.errors[static_cast<std::size_t>(i)]);
+    };
     trial.jet.ez = squared(0), trial.jet.ea = squared(1), trial.jet.eb = squared(2);
     check_step(trial.jet, trial.errors, along(trial.jet), most);
   }
@@ -153,7 +159,8 @@ TEST_CASE("where products underflow the bounds of a later step hold") {
       // the first step leaves bounds of z and z' as large as these
       const std::array<double, 3> errors{0x1p-51, 0x1p-49, 0};
       Jet jet = started(tiny, 0x1p-1060);
-      jet.zx = tiny, jet.zy = other > 2 ? 0.0 : other, jet.ax = other > 2 ? 2.0 : other, jet.ay = -tiny, jet.bx = tiny, jet.by = other;
+      jet.zx = tiny, jet.zy = other > 2 ? 0.0 : other, jet.ax = other > 2 ? 2.0 : other, jet.ay = -tiny, jet.bx = tiny,
+      jet.by = other;
       jet.ez = errors[0] * errors[0], jet.ea = errors[1] * errors[1];
       check_step(jet, errors, {source.direction(), source.direction(), source.direction()}, most);
     }
@@ -167,7 +174,8 @@ TEST_CASE("the squares bound the errors along orbits, as MPFR has them") {
   PointSource source(9004);
   std::uint64_t orbits = 0, useful = 0;
   for (std::uint64_t k = 0; k < reference::repeats(600); ++k) {
-    const DoublePoint c = source.one_in(4) ? near_boundary::biased(source) : near_boundary::beside(source, source.between(-34, -2));
+    const DoublePoint c =
+        source.one_in(4) ? near_boundary::biased(source) : near_boundary::beside(source, source.between(-34, -2));
     Jet jet = started(c.x, c.y);
     const std::uint64_t most = 1 + source.below(300);
     std::uint64_t n = 0;
@@ -203,7 +211,8 @@ TEST_CASE("the lanes' logarithm is within 2^-40 from 2^40 to 2^400, and their ta
   };
   for (std::uint64_t k = 0; k < reference::repeats(60'000); ++k) {
     double m = std::abs(doubles::any_double(source, source.between(40, 399)));
-    if (source.one_in(8)) m = std::ldexp(source.one_in(2) ? 1 - 0x1p-53 : 0x1.6a09e667f3bcdp+0, static_cast<int>(source.between(41, 399)));
+    if (source.one_in(8))
+      m = std::ldexp(source.one_in(2) ? 1 - 0x1p-53 : 0x1.6a09e667f3bcdp+0, static_cast<int>(source.between(41, 399)));
     if (source.one_in(50)) m = source.one_in(2) ? 0x1p+40 : 0x1p+400;
     reference::Real truth(200);
     mpfr_set_d(truth, m, MPFR_RNDN);
@@ -211,7 +220,8 @@ TEST_CASE("the lanes' logarithm is within 2^-40 from 2^40 to 2^400, and their ta
     INFO(std::hexfloat << "m = " << m);
     REQUIRE(off(truth, value(merestone::HWY_NAMESPACE::logarithm(m))) <= 0x1p-40);
 
-    const double x = source.one_in(20) ? 1 : std::min(1.0, std::abs(doubles::any_double(source, source.between(-60, -1))));
+    const double x =
+        source.one_in(20) ? 1 : std::min(1.0, std::abs(doubles::any_double(source, source.between(-60, -1))));
     reference::Real tangent(200);
     mpfr_set_d(tangent, x, MPFR_RNDN);
     mpfr_tanh(tangent, tangent, MPFR_RNDN);
@@ -226,7 +236,8 @@ TEST_CASE("one orbit after another in the scalar instance gives the bits of the 
   PointSource source(9006);
   std::vector<DoublePoint> points;
   for (std::uint64_t k = 0; k < reference::repeats(1'000); ++k)
-    points.push_back(source.one_in(4) ? near_boundary::biased(source) : near_boundary::beside(source, source.between(-30, -2)));
+    points.push_back(source.one_in(4) ? near_boundary::biased(source)
+                                      : near_boundary::beside(source, source.between(-30, -2)));
   std::vector<ExteriorMark> marks(points.size());
   exterior_discs(points, {600, 0}, marks);
   std::uint64_t proved = 0;
@@ -260,7 +271,8 @@ TEST_CASE("a jet that is too near, too far, too uncertain or no number shows no 
     return value(read_off(other, at_scale).radius) == 0;
   };
   const Number nan = std::nan(""), infinity = HUGE_VAL;
-  for (Number Jet::*field : {&Jet::zx, &Jet::ax, &Jet::ay, &Jet::bx, &Jet::by, &Jet::ez, &Jet::ea, &Jet::eb, &Jet::cx, &Jet::cy}) {
+  for (Number Jet::*field :
+       {&Jet::zx, &Jet::ax, &Jet::ay, &Jet::bx, &Jet::by, &Jet::ez, &Jet::ea, &Jet::eb, &Jet::cx, &Jet::cy}) {
     CHECK(shows_nothing([&](Jet& j) { j.*field = nan; }));
     CHECK(shows_nothing([&](Jet& j) { j.*field = infinity; }));
   }

@@ -5,7 +5,8 @@
 #include "lanes/doubles.hpp"
 #include "lanes/exterior_batch.hpp"
 
-/// Parameters for the tests of many exterior discs, found by plain double precision: where they lie is no matter of proof.
+/// Parameters for the tests of many exterior discs, found by plain double precision: where they lie is no matter of
+/// proof.
 namespace near_boundary {
 
 using merestone::DoublePoint;
@@ -25,7 +26,8 @@ inline std::uint64_t plain_index(double c_x, double c_y, std::uint64_t limit) {
 /// Leaves within 1,000 steps, and is within 2^exponent of one that does not.
 inline DoublePoint beside(PointSource& source, long exponent) {
   static const std::vector<std::complex<double>> members = {{0, 0}, {-1, 0}, {-0.125, 0.75}, {-1.75, 0}, {0.28, 0.53}};
-  std::complex<double> in = source.pick(members), out = {2 * source.direction().re.get_d(), 2 * source.direction().im.get_d()};
+  std::complex<double> in = source.pick(members),
+                       out = {2 * source.direction().re.get_d(), 2 * source.direction().im.get_d()};
   if (plain_index(out.real(), out.imag(), 1'000) == 0) out = {0, 2};
   while (std::abs(out - in) > std::ldexp(1.0, static_cast<int>(exponent))) {
     const std::complex<double> middle = 0.5 * (in + out);

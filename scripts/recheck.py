@@ -167,7 +167,8 @@ def parse_options(arguments):
     parser.add_argument("files", nargs="+", metavar="FILE", help="a certificate of either form; - is standard input")
     parser.add_argument("--json", action="store_true", help="one JSON object a line")
     parser.add_argument("--all", action="store_true", help=f"print every claim, also of files with more than {FEW}")
-    parser.add_argument("--sample", type=natural, metavar="N", help="check N claims of each file, or N blocks and N components, drawn at random")
+    parser.add_argument("--sample", type=natural, metavar="N",
+                        help="check N claims of each file, or N blocks and N components, drawn at random")
     parser.add_argument("--max-work", type=natural, metavar="N", default=Limits().work,
                         help="most steps of orbits for one file, weighted by the precision (%(default)s)")
     parser.add_argument("--max-bits", type=natural, metavar="N", default=Limits().bits,

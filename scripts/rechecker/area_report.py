@@ -67,8 +67,8 @@ def _print_text(name, check, digest):
     if check.over_limit:
         print(f"{name}: {check.over_limit}")
     elif not check.failed:
-        print(f"{name}: computed here: {_interval(check.at_least, check.at_most)} (Lemmas A1, A2): {check.outside_marks} "
-              f"marks outside, {check.inside_marks} inside, {check.components()[1]} components")
+        print(f"{name}: computed here: {_interval(check.at_least, check.at_most)} (Lemmas A1, A2): "
+              f"{check.outside_marks} marks outside, {check.inside_marks} inside, {check.components()[1]} components")
     for reservation in _reservations(check):
         print(f"{name}: {reservation}")
     print(f"{name}: {check.blocks} blocks: {_verdict(check)}; claims-digest {digest}")

@@ -1,4 +1,4 @@
-"""A square of fine cells, painted row by row in exact integers (Lemma N2): a row is an integer with a bit for each cell."""
+"""A square of fine cells, painted row by row in exact integers: a row is an integer with a bit for each cell."""
 
 from math import isqrt
 

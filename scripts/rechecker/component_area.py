@@ -3,7 +3,7 @@
 from fractions import Fraction
 
 from rechecker.balls import Ball, TooWide, modulus_up
-from rechecker.claims import Centre, Disc
+from rechecker.claims import Disc
 from rechecker.cover_marks import NotShown
 from rechecker.exact import Dyadic
 from rechecker.power_series import Series, inverse_coefficients
@@ -133,7 +133,7 @@ def component_area(component, budget):
 
 
 def require_distinct(components):
-    """Raises NotShown unless the closed squares about the discs are pairwise disjoint, so that the nuclei are distinct."""
+    """Raises NotShown unless the closed squares about the discs are disjoint, so that the nuclei are distinct."""
     squares = []
     for number, component in enumerate(components):
         x, y, r = component.re.fraction(), component.im.fraction(), Fraction(2) ** component.radius_exponent

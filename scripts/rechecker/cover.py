@@ -11,7 +11,7 @@ from rechecker.quadtree import marked_cells
 
 
 class Place(NamedTuple):
-    """A closed square from a corner to the right and upward, of side 2^side_exponent, cut into 2^grade x 2^grade cells."""
+    """A closed square from a corner to the right and upward, side 2^side_exponent, cut into 2^grade x 2^grade cells."""
 
     x: Dyadic
     y: Dyadic
@@ -90,7 +90,7 @@ class Proof(NamedTuple):
 
 
 def _paint(canvas, place, disc):
-    """Rounded so that the painted disc lies in the given one: the centre by less than two units, the radius by three."""
+    """The painted disc lies in the given one: the centre is off by less than two units, the radius less by three."""
     scale = place.grade - place.side_exponent + PLACES
 
     def units(value):

@@ -58,11 +58,14 @@ def exterior_mark(x, y, exponent, budget):
 
     def attempt(places):
         cx, cy = x.floor(places), y.floor(places)
-        found = escaping_jet(cx, cy, places, MOST_STEPS)
-        if found is None:
+        try:
+            found = escaping_jet(cx, cy, places, MOST_STEPS)
+        except TooWide:
             budget.spend(MOST_STEPS, places)
+            raise
+        budget.spend(found[0] if found else MOST_STEPS, places)
+        if found is None:
             raise NotShown(f"|z_n| stays below 2^20 for n up to {MOST_STEPS}")
-        budget.spend(found[0], places)
         return disc_of_jet(Centre(x, y), found[0], Ball(cx, cy, 0, places), *found[1:])
 
     least = max(0, -x.exponent, -y.exponent)  # so that the centre is exact

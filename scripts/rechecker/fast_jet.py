@@ -1,4 +1,4 @@
-"""z_n and its first two derivatives with respect to c, followed until the orbit is far away; made for many parameters."""
+"""z_n and its first two derivatives with respect to c until the orbit is far away; made for many parameters."""
 
 from math import isqrt
 

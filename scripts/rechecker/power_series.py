@@ -28,7 +28,8 @@ class Series:
 
     def doubled(self):
         twice = Series(self.places)
-        twice.x, twice.y, twice.m, twice.r = ([2 * part for part in parts] for parts in (self.x, self.y, self.m, self.r))
+        mine = self.x, self.y, self.m, self.r
+        twice.x, twice.y, twice.m, twice.r = ([2 * part for part in parts] for parts in mine)
         return twice
 
     def _convolved(self, other, lo, hi, n):
@@ -67,8 +68,8 @@ def _reciprocal(series, terms):
 def inverse_coefficients(series):
     """Bounds (least, most) in units of |a_n|, n >= 1, for the inverse t = Σ a_n λ^n of λ = series(t), λ(0) = 0.
 
-    Lagrange: n a_n is the coefficient of order n - 1 of h^n, h = t/λ. Every power is a product of two kept ones, of which
-    one coefficient is formed: n = i + j·m with h, ..., h^m and h^m, h^2m, ... kept. Raises TooWide.
+    Lagrange: n a_n is the coefficient of order n - 1 of h^n, h = t/λ. Every power is a product of two that are kept, and
+    of that one coefficient is formed: n = i + j·m with h, ..., h^m and h^m, h^2m, ... kept. Raises TooWide.
     """
     terms, p = len(series.x) - 1, series.places
     if terms == 0:

@@ -1,7 +1,7 @@
 """Quadtrees in level order: which cells of a square are marked.
 
-A code is 1 (marked) plus 2 (split). The first byte is the code of the square, and each split cell, in the order in which
-cells are named, has a byte with the codes of its quarters: lower left, lower right, upper left, upper right.
+A code is 1 (marked) plus 2 (split). The first byte is the code of the square, and each split cell, in the order in
+which cells are named, has a byte with the codes of its quarters: lower left, lower right, upper left, upper right.
 """
 
 from typing import NamedTuple

@@ -36,6 +36,6 @@ def container_bytes(header, payloads):
     for ordinal, payload in enumerate(payloads):
         stored, digest = zlib.compress(payload), hashlib.sha256(payload).digest()
         index += struct.pack("<QQ", len(data), _entries(payload)) + digest
-        data += b"BLK\n" + struct.pack("<QQQQI", ordinal, _entries(payload), len(payload), len(stored), zlib.crc32(payload))
-        data += digest + stored
+        numbers = ordinal, _entries(payload), len(payload), len(stored), zlib.crc32(payload)
+        data += b"BLK\n" + struct.pack("<QQQQI", *numbers) + digest + stored
     return data + b"IDX\n" + struct.pack("<Q", len(payloads)) + index + struct.pack("<Q", len(data)) + b"END\n"

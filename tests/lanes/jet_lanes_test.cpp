@@ -22,6 +22,7 @@ using merestone::HWY_NAMESPACE::read_off;
 using merestone::HWY_NAMESPACE::step;
 using reference::Complex;
 using reference::PointSource;
+using reference::ratio;
 
 namespace {
 
@@ -258,6 +259,31 @@ TEST_CASE("one orbit after another in the scalar instance gives the bits of the 
     REQUIRE(value(disc.y) == marks[k].circle.y);
   }
   CHECK(proved > points.size() / 3);
+}
+
+TEST_CASE("a disc of the lanes lies in the image of each map that the errors of f1 and a2 admit") {
+  PointSource source(9008);
+  std::uint64_t discs = 0;
+  for (std::uint64_t k = 0; k < reference::repeats(3'000); ++k) {
+    const long scale = source.between(-30, 5);
+    const double fx = doubles::any_double(source, scale), fy = scaled(source, scale);
+    const double angle = static_cast<double>(source.below(10'000)),
+                 size = source.one_in(2) ? 1.9 : 0.001 * static_cast<double>(source.below(1'990));
+    const double sx = size * std::cos(angle), sy = size * std::sin(angle);
+    const double ef = source.one_in(3) ? 0 : std::ldexp(std::abs(fx), static_cast<int>(source.between(-30, -2))),
+                 es = std::ldexp(1.0, static_cast<int>(source.between(-30, -4)));
+    const Discs found = merestone::HWY_NAMESPACE::univalent_discs(started(0, 0), fx, fy, ef, sx, sy, es);
+    if (!(value(found.radius) > 0)) continue;
+    ++discs;
+    const Complex f1 = exact(fx, fy), a2 = exact(sx, sy);
+    for (const long sign : {-1, 0, 1}) {  // least |f1|, and a2 longer, as it is, or shorter: where the disc is tightest
+      const reference::Germ germ{f1 - exact(ef) * unit_along(fx, fy), a2 + sign * exact(es) * unit_along(sx, sy)};
+      if (norm(germ.a2) >= ratio(399, 100)) continue;
+      INFO(std::hexfloat << "f1 = " << fx << ", " << fy << ", a2 = " << sx << ", " << sy << ", es = " << es);
+      REQUIRE(reference::covers(germ, exact(value(found.x), value(found.y)), exact(value(found.radius))));
+    }
+  }
+  CHECK(discs > reference::repeats(3'000) / 2);
 }
 
 TEST_CASE("a jet that is too near, too far, too uncertain or no number shows no disc") {

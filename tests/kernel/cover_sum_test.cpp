@@ -127,6 +127,17 @@ TEST_CASE("of a box, trunk cells inside decide only where they lie in it") {
   CHECK(exact(sum.inside()) == 6);
 }
 
+TEST_CASE("of a box off the grid, the cells that touch it are kept, and those that lie in it may be inside") {
+  const RationalBox odd = box(-2, 0, Rational(-5, 6), 2);  // 2 1/3 of the 4 columns of the cell in column 0, row 0
+  CoverSum sum(kPlan, false, odd, trunk_of(kPlan, {}, window_of(kPlan.root, odd)));
+  CHECK_THAT(words(sum.add(block_at(0, 0, 2), 13, 0)), Contains("more cells are claimed"));
+  CoverSum again(kPlan, false, odd, trunk_of(kPlan, {}, window_of(kPlan.root, odd)));
+  CHECK(words(again.add(block_at(0, 0, 2), 2, 3)) == "none");
+  CHECK(words(again.finish()) == "none");
+  CHECK(exact(again.at_most()) == ratio(10, 4));
+  CHECK(exact(again.inside()) == ratio(3, 4));
+}
+
 TEST_CASE("a root must reach as far as what the bound is about") {
   const auto reach = [](double x, double y, std::int32_t side, bool mirrored,
                         const std::optional<RationalBox>& within) {

@@ -253,8 +253,8 @@ MUTANTS = {
         ("a split cell is marked too",
          "(marks.has(order) * kMarked + is_split * kSplit)",
          "((marks.has(order) || is_split) * kMarked + is_split * kSplit)"),
-        ("parents of unmarked cells alone",
+        ("parents of marked cells not split",
          "for (std::size_t d = needed.size(); d-- > 1;)",
-         "for (std::size_t d = needed.size(); d-- > 2;)"),
+         "for (std::size_t d = needed.size(); d-- > 3;)"),
     ],
 }

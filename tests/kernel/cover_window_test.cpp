@@ -18,8 +18,6 @@ struct Sides {
   mpq_class lo, hi;
 };
 
-bool has(std::uint32_t first, std::uint32_t end, std::uint32_t k) { return first <= k && k < end; }
-
 // The end of a box: on the grid, off it by a little, anywhere, or beyond the square.
 mpq_class any_end(PointSource& source, const Sides& square, const mpq_class& cell) {
   mpq_class end = square.lo + cell * source.between(-3, 11);

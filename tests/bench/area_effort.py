@@ -78,7 +78,7 @@ class Plot:
         self.parts.append(f'<polyline points="{path}" fill="none" stroke="{colour}" stroke-width="2"/>')
         for s, g in points:
             self.parts.append(f'<circle cx="{self.x(s):.1f}" cy="{self.y(g):.1f}" r="4" fill="{colour}"/>')
-        self.text(self.x(points[-1][0]), self.y(points[-1][1]) - 10, name, "end")
+        self.text(self.x(points[-1][0]) - 14, self.y(points[-1][1]) + 18, name, "end")  # below: the line falls
 
     def svg(self):
         return (f'<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 {self.WIDTH} {self.HEIGHT}" '

@@ -58,8 +58,11 @@ std::optional<Failure> AreaRun::search_components() {
   CatalogueOptions wanted;
   wanted.resolution = request_.resolution;
   const std::vector<CatalogueEntry> found = catalogue(wanted, [this](const CatalogueProgress& progress) {
-    progress_.catalogue = progress;
-    report(AreaProgress::Phase::components);
+    if (options_.report) {  // called by several threads at once
+      AreaProgress now;
+      now.catalogue = progress;
+      options_.report(now);
+    }
     return goes_on();
   });
   ended_ = !goes_on();

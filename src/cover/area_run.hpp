@@ -29,9 +29,9 @@ struct AreaResult {
 
 struct AreaRunOptions {
   unsigned threads = 1;
-  BlockStore* store = nullptr;  // keeps finished blocks, and has those of an earlier run
-  std::function<void(const AreaProgress&)> report;
-  std::function<bool()> go_on;  // asked often, by any thread; false ends the run
+  BlockStore* store = nullptr;                      // keeps finished blocks, and has those of an earlier run
+  std::function<void(const AreaProgress&)> report;  // by several threads at once
+  std::function<bool()> go_on;                      // asked often, by any thread; false ends the run
 };
 
 /// Bounds the area from both sides: components first (Lemma A2), then the cover (Lemma A1).

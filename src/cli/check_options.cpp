@@ -104,7 +104,7 @@ void add_sampling(CLI::App& program, CheckWords& words) {
       ->type_name("S")
       ->check(CLI::Range(std::uint64_t{0}, kLargestSeed).description(""));
   program.add_flag("--exact", words.exact,
-                   "Establish every mark of an area's certificate in ball arithmetic: some hundred times slower than the default, "
+                   "Establish every mark of an area's certificate in ball arithmetic: about twenty times slower than the default, "
                    "double precision with tracked errors and balls for a sample");
 }
 
